@@ -3,7 +3,7 @@ import { join } from 'node:path';
 import { DATABASE } from './databases';
 import type { Databases } from './databases';
 import { stateFolder } from './paths';
-import { say } from './tell';
+import { say, Told } from './tell';
 
 const DAY_MS = 86_400_000;
 
@@ -25,8 +25,12 @@ const writeNote = (folder: string, note: SeedNote) =>
 
 /** Brings the schema of a database up to date. */
 export async function migrateDatabase(ownerUrl: string): Promise<void> {
-  const { migrate } = await import('../db/migrate');
-  await migrate(ownerUrl);
+  const { migrate, SchemaNewer } = await import('../db/migrate');
+  try {
+    await migrate(ownerUrl);
+  } catch (error) {
+    throw error instanceof SchemaNewer ? new Told(error.message) : error;
+  }
 }
 
 async function makeDatabase(databases: Databases): Promise<void> {

@@ -6,7 +6,7 @@ import type { Purpose } from './paths';
 import { removeCluster, startCluster } from './postgres';
 import type { Cluster } from './postgres';
 
-export type TestCluster = { cluster: Cluster; folder: string; destroy(): Promise<void> };
+export type TestCluster = { cluster: Cluster; folder: string; destroy: () => Promise<void> };
 
 /** State of a test process that is gone: its folder's name tells the number, its lock the start time. */
 function isAbandoned(name: string): name is Purpose {
