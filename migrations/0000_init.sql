@@ -96,8 +96,10 @@ CREATE TABLE "infusions" (
 	"ended_by" uuid,
 	"ended_how" text,
 	"end_reason" text,
+	"infused_ml" numeric(7, 1),
 	"bag_product_id" uuid NOT NULL,
 	"bag_volume_ml" numeric(7, 1),
+	"bag_number" text,
 	"bag_batch" text,
 	"bag_expires_on" date,
 	"way" text NOT NULL,
@@ -110,13 +112,13 @@ CREATE TABLE "infusions" (
 	"comparisons" text NOT NULL,
 	CONSTRAINT "infusions_hospital_id_id_pk" PRIMARY KEY("hospital_id","id"),
 	CONSTRAINT "infusions_version" UNIQUE("hospital_id","version_id"),
-	CONSTRAINT "infusions_way" CHECK ("infusions"."way" in ('pump', 'syringe', 'hand', 'pressure-bag', 'gravity')),
+	CONSTRAINT "infusions_way" CHECK ("infusions"."way" in ('pump', 'syringe', 'pressure-bag', 'gravity', 'hand')),
 	CONSTRAINT "infusions_ended_how" CHECK ("infusions"."ended_how" in ('stopped', 'finished', 'replaced')),
 	CONSTRAINT "infusions_line_class" CHECK ("infusions"."line_class" in ('peripheral', 'central', 'intraosseous')),
 	CONSTRAINT "infusions_by_another" CHECK ("infusions"."started_by" <> "infusions"."author_id"),
 	CONSTRAINT "infusions_witness_another" CHECK ("infusions"."witness_id" <> "infusions"."started_by"),
 	CONSTRAINT "infusions_ended" CHECK (("infusions"."ended_at" is null) = ("infusions"."ended_by" is null) and ("infusions"."ended_at" is null) = ("infusions"."ended_how" is null)),
-	CONSTRAINT "infusions_pump_figures" CHECK (("infusions"."way" <> 'pump' or ("infusions"."pump_rate_ml_h" is not null and "infusions"."pump_volume_ml" is not null)) and ("infusions"."pump_rate_ml_h" is null or "infusions"."pump_rate_ml_h" > 0) and ("infusions"."pump_volume_ml" is null or "infusions"."pump_volume_ml" > 0))
+	CONSTRAINT "infusions_pump_figures" CHECK (("infusions"."way" <> 'pump' or ("infusions"."pump_rate_ml_h" is not null and "infusions"."pump_volume_ml" is not null)) and ("infusions"."pump_rate_ml_h" is null or "infusions"."pump_rate_ml_h" > 0) and ("infusions"."pump_volume_ml" is null or "infusions"."pump_volume_ml" > 0) and ("infusions"."infused_ml" is null or "infusions"."infused_ml" >= 0))
 );
 --> statement-breakpoint
 ALTER TABLE "infusions" ENABLE ROW LEVEL SECURITY;--> statement-breakpoint
@@ -131,7 +133,7 @@ CREATE TABLE "prints" (
 	"watermark" text,
 	CONSTRAINT "prints_hospital_id_id_pk" PRIMARY KEY("hospital_id","id"),
 	CONSTRAINT "prints_code" UNIQUE("code"),
-	CONSTRAINT "prints_code_length" CHECK (length("prints"."code") >= 16)
+	CONSTRAINT "prints_code_form" CHECK ("prints"."code" ~ '^[A-Z2-7]{20}$')
 );
 --> statement-breakpoint
 ALTER TABLE "prints" ENABLE ROW LEVEL SECURITY;--> statement-breakpoint
@@ -161,6 +163,7 @@ CREATE TABLE "checks" (
 	"reserved_until" timestamp (3) with time zone,
 	"comparison" text,
 	"choices_differ" boolean DEFAULT false NOT NULL,
+	"returned_what" text,
 	"reason" text,
 	"passed_to" uuid,
 	"is_beside" boolean DEFAULT false NOT NULL,
@@ -198,7 +201,7 @@ CREATE TABLE "exceptions" (
 	"countersigned_at" timestamp (3) with time zone,
 	CONSTRAINT "exceptions_hospital_id_id_pk" PRIMARY KEY("hospital_id","id"),
 	CONSTRAINT "exceptions_state" CHECK ("exceptions"."state" in ('asked', 'granted', 'refused', 'void')),
-	CONSTRAINT "exceptions_how" CHECK ("exceptions"."how" in ('in-person', 'telephone')),
+	CONSTRAINT "exceptions_how" CHECK ("exceptions"."how" in ('here', 'telephone')),
 	CONSTRAINT "exceptions_by_another" CHECK ("exceptions"."by_id" <> "exceptions"."author_id"),
 	CONSTRAINT "exceptions_decided" CHECK ("exceptions"."state" not in ('granted', 'refused') or ("exceptions"."by_id" is not null and "exceptions"."decided_at" is not null and "exceptions"."reason" is not null and "exceptions"."how" is not null)),
 	CONSTRAINT "exceptions_telephone" CHECK ("exceptions"."how" is distinct from 'telephone' or ("exceptions"."recorded_by" is not null and "exceptions"."read_back_to" is not null and "exceptions"."read_back_to" <> "exceptions"."recorded_by" and "exceptions"."read_back_to" <> "exceptions"."by_id" and "exceptions"."countersign_due_at" is not null))
@@ -222,16 +225,16 @@ CREATE TABLE "children" (
 	"hospital_id" uuid DEFAULT nullif(current_setting('app.hospital_id', true), '')::uuid NOT NULL,
 	"id" uuid DEFAULT gen_random_uuid() NOT NULL,
 	"number" text NOT NULL,
-	"family_name" text NOT NULL,
-	"given_name" text NOT NULL,
+	"surname" text NOT NULL,
+	"given" text NOT NULL,
 	"born_on" date NOT NULL,
 	"born_at" timestamp (3) with time zone,
 	"sex" text,
 	"gestation_weeks" smallint,
 	"gestation_days" smallint,
 	"flags" text[] DEFAULT '{}' NOT NULL,
-	"allergies" text,
-	"family_key" text collate "C" GENERATED ALWAYS AS (lower(family_name)) STORED NOT NULL,
+	"allergies" text NOT NULL,
+	"surname_key" text collate "C" GENERATED ALWAYS AS (lower(surname)) STORED NOT NULL,
 	"registered_by" uuid NOT NULL,
 	"registered_at" timestamp (3) with time zone NOT NULL,
 	"rev" integer DEFAULT 1 NOT NULL,
@@ -239,7 +242,7 @@ CREATE TABLE "children" (
 	CONSTRAINT "children_number" UNIQUE("hospital_id","number"),
 	CONSTRAINT "children_sex" CHECK ("children"."sex" in ('female', 'male')),
 	CONSTRAINT "children_flags" CHECK ("children"."flags" <@ array['raised-adh', 'cardiac', 'renal', 'hepatic', 'raised-icp', 'severe-malnutrition', 'low-albumin', 'dka', 'metabolic', 'ketogenic-diet', 'nil-by-mouth', 'ceftriaxone']::text[]),
-	CONSTRAINT "children_gestation_weeks" CHECK ("children"."gestation_weeks" between 22 and 44),
+	CONSTRAINT "children_gestation_weeks" CHECK ("children"."gestation_weeks" between 20 and 45),
 	CONSTRAINT "children_gestation_days" CHECK ("children"."gestation_days" is null or ("children"."gestation_days" between 0 and 6 and "children"."gestation_weeks" is not null))
 );
 --> statement-breakpoint
@@ -441,7 +444,7 @@ CREATE TABLE "order_versions" (
 	CONSTRAINT "order_versions_content_with_state" CHECK (("order_versions"."content" is null) = ("order_versions"."state" in ('draft', 'discarded')) and ("order_versions"."content" is null) = ("order_versions"."signed_at" is null)),
 	CONSTRAINT "order_versions_kind" CHECK ("order_versions"."kind" in ('maintenance', 'bolus')),
 	CONSTRAINT "last_resort_maintenance" CHECK ("order_versions"."kind" <> 'maintenance' or ("order_versions"."rate_ml_h" is null and "order_versions"."content" is null) or ("order_versions"."rate_ml_h" is not null and "order_versions"."weight_kg" is not null and "order_versions"."rate_ml_h" * 24 <= 2500)),
-	CONSTRAINT "last_resort_bolus" CHECK ("order_versions"."kind" <> 'bolus' or ("order_versions"."volume_ml" is null and "order_versions"."content" is null) or ("order_versions"."volume_ml" is not null and "order_versions"."weight_kg" is not null and "order_versions"."volume_ml" <= 500 and "order_versions"."volume_ml" <= 20 * "order_versions"."weight_kg")),
+	CONSTRAINT "last_resort_bolus" CHECK ("order_versions"."kind" <> 'bolus' or ("order_versions"."volume_ml" is null and "order_versions"."content" is null) or ("order_versions"."volume_ml" is not null and "order_versions"."volume_ml" <= 500 and case when "order_versions"."weight_kg" is null then "order_versions"."urgency" = 'emergency' else "order_versions"."volume_ml" <= 20 * "order_versions"."weight_kg" end)),
 	CONSTRAINT "last_resort_positive" CHECK (("order_versions"."weight_kg" is null or "order_versions"."weight_kg" > 0) and ("order_versions"."rate_ml_h" is null or "order_versions"."rate_ml_h" > 0) and ("order_versions"."volume_ml" is null or "order_versions"."volume_ml" > 0) and ("order_versions"."over_min" is null or "order_versions"."over_min" > 0))
 );
 --> statement-breakpoint
@@ -536,8 +539,8 @@ CREATE TABLE "products" (
 	"bag_sizes_ml" integer[] NOT NULL,
 	"is_ready_mixed" boolean DEFAULT true NOT NULL,
 	"is_high_risk" boolean DEFAULT false NOT NULL,
-	"uses" text[] DEFAULT '{}' NOT NULL,
-	"lines" text[] DEFAULT '{}' NOT NULL,
+	"kinds" text[] NOT NULL,
+	"is_newborn_only" boolean DEFAULT false NOT NULL,
 	"gtins" text[] DEFAULT '{}' NOT NULL,
 	"position" integer DEFAULT 0 NOT NULL,
 	"added_at" timestamp (3) with time zone NOT NULL,
@@ -545,6 +548,7 @@ CREATE TABLE "products" (
 	"rev" integer DEFAULT 1 NOT NULL,
 	CONSTRAINT "products_hospital_id_id_pk" PRIMARY KEY("hospital_id","id"),
 	CONSTRAINT "products_name" UNIQUE("hospital_id","name"),
+	CONSTRAINT "products_kinds" CHECK ("products"."kinds" <@ array['maintenance', 'bolus']::text[]),
 	CONSTRAINT "products_bag_sizes" CHECK (0 < all ("products"."bag_sizes_ml"))
 );
 --> statement-breakpoint
@@ -600,6 +604,7 @@ CREATE TABLE "weights" (
 	"finding" text,
 	"needs" text DEFAULT 'nothing' NOT NULL,
 	"second_kg" numeric(6, 3),
+	"second_method" text,
 	"second_at" timestamp (3) with time zone,
 	"second_by" uuid,
 	"confirmed_by" uuid,
@@ -608,10 +613,11 @@ CREATE TABLE "weights" (
 	"superseded_reason" text,
 	CONSTRAINT "weights_hospital_id_id_pk" PRIMARY KEY("hospital_id","id"),
 	CONSTRAINT "weights_method" CHECK ("weights"."method" in ('scales', 'baby-scales', 'bed-scales', 'stated', 'estimated-age', 'estimated-tape', 'birth-weight')),
-	CONSTRAINT "weights_needs" CHECK ("weights"."needs" in ('nothing', 'second-reading', 'second-person')),
+	CONSTRAINT "weights_second_method" CHECK ("weights"."second_method" in ('scales', 'baby-scales', 'bed-scales', 'stated', 'estimated-age', 'estimated-tape', 'birth-weight')),
+	CONSTRAINT "weights_needs" CHECK ("weights"."needs" in ('nothing', 'second-measurement', 'second-person')),
 	CONSTRAINT "last_resort_weight" CHECK ("weights"."kg" > 0 and "weights"."kg" <= 250),
 	CONSTRAINT "weights_second_kg" CHECK ("weights"."second_kg" > 0 and "weights"."second_kg" <= 250),
-	CONSTRAINT "weights_second" CHECK (num_nonnulls("weights"."second_kg", "weights"."second_at", "weights"."second_by") in (0, 3)),
+	CONSTRAINT "weights_second" CHECK (num_nonnulls("weights"."second_kg", "weights"."second_method", "weights"."second_at", "weights"."second_by") in (0, 4)),
 	CONSTRAINT "weights_confirmed_by_another" CHECK ("weights"."confirmed_by" <> "weights"."by_id"),
 	CONSTRAINT "weights_confirmed" CHECK (("weights"."confirmed_by" is null) = ("weights"."confirmed_at" is null))
 );
@@ -703,7 +709,7 @@ CREATE INDEX "checks_checker" ON "checks" USING btree ("hospital_id","checker_id
 CREATE UNIQUE INDEX "exceptions_one_open" ON "exceptions" USING btree ("hospital_id","version_id","limit_code","content_sha256") WHERE "exceptions"."state" in ('asked', 'granted');--> statement-breakpoint
 CREATE INDEX "exceptions_asked" ON "exceptions" USING btree ("hospital_id","asked_at") WHERE "exceptions"."state" = 'asked';--> statement-breakpoint
 CREATE INDEX "exceptions_countersign" ON "exceptions" USING btree ("hospital_id","countersign_due_at") WHERE "exceptions"."countersign_due_at" is not null and "exceptions"."countersigned_at" is null;--> statement-breakpoint
-CREATE INDEX "children_family_key" ON "children" USING btree ("hospital_id","family_key");--> statement-breakpoint
+CREATE INDEX "children_surname_key" ON "children" USING btree ("hospital_id","surname_key");--> statement-breakpoint
 CREATE UNIQUE INDEX "fluid_plans_one_open" ON "fluid_plans" USING btree ("hospital_id","child_id") WHERE "fluid_plans"."ended_at" is null;--> statement-breakpoint
 CREATE INDEX "intakes_child" ON "intakes" USING btree ("hospital_id","child_id","at");--> statement-breakpoint
 CREATE INDEX "results_latest" ON "results" USING btree ("hospital_id","child_id","analyte","at");--> statement-breakpoint

@@ -15,7 +15,7 @@ END $$;
 -- What may be read of a version its checker has not signed. No content, figure, fluid, weight or author.
 CREATE VIEW covered_versions WITH (security_invoker = true) AS
   SELECT v.hospital_id, v.id AS version_id, v.order_id, o.code, v.version, v.child_id, v.kind, v.urgency,
-         v.state, v.state_since, v.reason, v.asked_start, v.check_due_at, v.asked_checker, v.signed_at
+         v.state, v.state_since, v.reason, v.asked_start, v.check_due_at, v.asked_checker, v.signed_at, v.is_high_risk
   FROM order_versions v
   JOIN orders o ON o.hospital_id = v.hospital_id AND o.id = v.order_id;
 --> statement-breakpoint
@@ -188,7 +188,7 @@ GRANT UPDATE (superseded_by) ON intakes, results, heights TO brimline_app;
 --> statement-breakpoint
 GRANT UPDATE (ended_at, ended_by) ON fluid_plans TO brimline_app;
 --> statement-breakpoint
-GRANT UPDATE (second_kg, second_at, second_by, confirmed_by, confirmed_at, superseded_by, superseded_reason)
+GRANT UPDATE (second_kg, second_method, second_at, second_by, confirmed_by, confirmed_at, superseded_by, superseded_reason)
   ON weights TO brimline_app;
 --> statement-breakpoint
 GRANT UPDATE (state, approved_by, approved_at, in_force_from, retired_at) ON rulebooks TO brimline_app;

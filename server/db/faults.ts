@@ -43,7 +43,7 @@ export const isUnavailable = (error: unknown): boolean => {
   return LOST.has(code) || code.startsWith('08');
 };
 
-export type ConstraintCode = 'conflict' | 'last-resort-limit' | 'constraint-broken';
+export type ConstraintCode = 'conflict' | 'last-resort-limit';
 
 /** The refusal behind a broken constraint; undefined for every other error. */
 export function constraintRefusal(error: unknown): { code: ConstraintCode; constraint: string } | undefined {
@@ -56,7 +56,7 @@ export function constraintRefusal(error: unknown): { code: ConstraintCode; const
       return { code: 'conflict', constraint };
     case '23514': // check
       return {
-        code: constraint.startsWith('last_resort_') ? 'last-resort-limit' : 'constraint-broken',
+        code: constraint.startsWith('last_resort_') ? 'last-resort-limit' : 'conflict',
         constraint,
       };
     default:

@@ -113,7 +113,10 @@ async function settle<T>(run: Run, tx: Tx, sql: TransactionSql, outcome: Outcome
 }
 
 /** A constraint rolled everything back: the refusal is recorded in a transaction of its own. */
-function recordBroken<T>(run: Run, broken: { code: string; constraint: string }): Promise<Answer<T>> {
+function recordBroken<T>(
+  run: Run,
+  broken: NonNullable<ReturnType<typeof constraintRefusal>>,
+): Promise<Answer<T>> {
   const entry: LedgerNote = run.options.attempt ?? {
     act: 'write-refused',
     subject: { kind: 'constraint', id: broken.constraint },

@@ -1,5 +1,6 @@
 import type { LedgerNote } from '../ledger/entries';
 import type { nearMisses } from './schema/near-misses';
+import type { ProblemCode } from '@shared/problems';
 import type { Instant } from '@shared/time';
 
 /** One message to one account; `ref` holds ids only. */
@@ -22,7 +23,7 @@ export type Done<T> = Traces & { ok: true; value: T; mails: readonly Mail[] };
 
 export type Refused = Traces & {
   ok: false;
-  code: string;
+  code: ProblemCode;
   detail?: string;
   errors?: readonly FieldError[];
   /** Whatever the screen needs to say what would be right; plain JSON. */
@@ -40,7 +41,7 @@ export const done = <T>(value: T, traces: Traces & { mails?: readonly Mail[] } =
 });
 
 /** The command refuses: its writes are undone, its entries and near misses are kept. */
-export const refused = (code: string, rest: Omit<Refused, 'ok' | 'code'> = {}): Refused => ({
+export const refused = (code: ProblemCode, rest: Omit<Refused, 'ok' | 'code'> = {}): Refused => ({
   ...rest,
   ok: false,
   code,
@@ -51,7 +52,7 @@ export type Answer<T> =
   | { ok: true; value: T; replayed: boolean }
   | {
       ok: false;
-      code: string;
+      code: ProblemCode;
       detail?: string;
       errors?: readonly FieldError[];
       data?: unknown;

@@ -63,7 +63,7 @@ export async function findPrint(
   database: Database,
   code: string,
 ): Promise<{ hospitalId: string; versionId: string } | undefined> {
-  if (!/^[0-9A-Za-z-]{16,64}$/.test(code)) return undefined;
+  if (!/^[A-Z2-7]{20}$/.test(code)) return undefined;
   const rows = await database.sql.begin(
     opening('read only', `set local app.hospital_id = ''; set local app.print_code = '${code}'`),
     (sql) => sql<{ hospitalId: string; versionId: string }[]>`

@@ -1,4 +1,4 @@
-import { LINE_CLASSES } from '@shared/calc/types';
+import { BOLUS_ROUTES, LINE_CLASSES } from '@shared/calc/types';
 import type { Millilitres, MillilitresPerHour } from '@shared/units';
 import { sql } from 'drizzle-orm';
 import {
@@ -20,7 +20,7 @@ import { accounts } from './accounts';
 import { orderVersions } from './orders';
 import { products } from './shelf';
 
-export const DELIVERY_WAYS = ['pump', 'syringe', 'hand', 'pressure-bag', 'gravity'] as const;
+export const DELIVERY_WAYS = [...BOLUS_ROUTES, 'hand'] as const;
 export const INFUSION_ENDS = ['stopped', 'finished', 'replaced'] as const;
 
 /** A started order: what hangs, through which line and pump, as the nurse read it. */
@@ -39,8 +39,10 @@ export const infusions = pgTable(
     endedBy: uuid('ended_by'),
     endedHow: text('ended_how', { enum: INFUSION_ENDS }),
     endReason: text('end_reason'),
+    infusedMl: decimal<Millilitres>('infused_ml', 7, 1),
     bagProductId: uuid('bag_product_id').notNull(),
     bagVolumeMl: decimal<Millilitres>('bag_volume_ml', 7, 1),
+    bagNumber: text('bag_number'),
     bagBatch: text('bag_batch'),
     bagExpiresOn: date('bag_expires_on', { mode: 'string' }),
     way: text('way', { enum: DELIVERY_WAYS }).notNull(),
@@ -85,7 +87,7 @@ export const infusions = pgTable(
     ),
     check(
       'infusions_pump_figures',
-      sql`(${t.way} <> 'pump' or (${t.pumpRateMlH} is not null and ${t.pumpVolumeMl} is not null)) and (${t.pumpRateMlH} is null or ${t.pumpRateMlH} > 0) and (${t.pumpVolumeMl} is null or ${t.pumpVolumeMl} > 0)`,
+      sql`(${t.way} <> 'pump' or (${t.pumpRateMlH} is not null and ${t.pumpVolumeMl} is not null)) and (${t.pumpRateMlH} is null or ${t.pumpRateMlH} > 0) and (${t.pumpVolumeMl} is null or ${t.pumpVolumeMl} > 0) and (${t.infusedMl} is null or ${t.infusedMl} >= 0)`,
     ),
     ownHospital(),
   ],
@@ -156,7 +158,7 @@ export const prints = pgTable(
     index('prints_version').on(t.hospitalId, t.versionId),
     within('prints_version', t, t.versionId, orderVersions),
     within('prints_by', t, t.by, accounts),
-    check('prints_code_length', sql`length(${t.code}) >= 16`),
+    check('prints_code_form', sql`${t.code} ~ '^[A-Z2-7]{20}$'`),
     ownHospital(),
     // the page behind the code is read without sign-in, before a hospital is known
     pgPolicy('by_code', {

@@ -70,6 +70,8 @@ export const checks = pgTable(
     /** Canonical text of the comparison. */
     comparison: text('comparison'),
     choicesDiffer: boolean('choices_differ').notNull().default(false),
+    /** Cannot verify: which entry. */
+    returnedWhat: text('returned_what'),
     /** Cannot verify, passed on, choice accepted: in words. */
     reason: text('reason'),
     passedTo: uuid('passed_to'),
@@ -106,7 +108,7 @@ export const checks = pgTable(
 );
 
 export const EXCEPTION_STATES = ['asked', 'granted', 'refused', 'void'] as const;
-export const EXCEPTION_WAYS = ['in-person', 'telephone'] as const;
+export const EXCEPTION_WAYS = ['here', 'telephone'] as const;
 
 /** A senior matter put to a senior: neither author nor checker, bound to the would-be content by its hash. */
 export const exceptions = pgTable(
@@ -133,6 +135,9 @@ export const exceptions = pgTable(
     readBackTo: uuid('read_back_to'),
     countersignDueAt: instant('countersign_due_at'),
     countersignedAt: instant('countersigned_at'),
+    /** By whom: by telephone the senior named, after an emergency any senior of the ward. */
+    countersignedBy: uuid('countersigned_by'),
+    overdueToldAt: instant('overdue_told_at'),
   },
   (t) => [
     primaryKey({ columns: [t.hospitalId, t.id] }),
@@ -154,6 +159,7 @@ export const exceptions = pgTable(
     within('exceptions_asked_of', t, t.askedOf, accounts),
     within('exceptions_recorded_by', t, t.recordedBy, accounts),
     within('exceptions_read_back_to', t, t.readBackTo, accounts),
+    within('exceptions_countersigned_by', t, t.countersignedBy, accounts),
     oneOf('exceptions_state', t.state, EXCEPTION_STATES),
     oneOf('exceptions_how', t.how, EXCEPTION_WAYS),
     check('exceptions_by_another', sql`${t.by} <> ${t.authorId}`),

@@ -34,8 +34,8 @@ export const children = pgTable(
     id: rowId(),
     /** The hospital's own number for the child. */
     number: text('number').notNull(),
-    familyName: text('family_name').notNull(),
-    givenName: text('given_name').notNull(),
+    surname: text('surname').notNull(),
+    given: text('given').notNull(),
     /** Civil date in the hospital's zone, YYYY-MM-DD. */
     bornOn: date('born_on', { mode: 'string' }).notNull(),
     /** Known for the newborn: bands by hours since birth need it. */
@@ -45,12 +45,12 @@ export const children = pgTable(
     gestationWeeks: smallint('gestation_weeks'),
     gestationDays: smallint('gestation_days'),
     flags: text('flags', { enum: FLAGS }).array().notNull().default([]),
-    /** In words; absent means not asked, "none known" is an answer. */
-    allergies: text('allergies'),
+    /** In words; "Not asked" and "None known" are answers too. */
+    allergies: text('allergies').notNull(),
     /** Prefix search is a range on this: under row-level security `like` and `lower()` cannot use an index. */
-    familyKey: codeUnitText('family_key')
+    surnameKey: codeUnitText('surname_key')
       .notNull()
-      .generatedAlwaysAs(sql`lower(family_name)`),
+      .generatedAlwaysAs(sql`lower(surname)`),
     registeredBy: uuid('registered_by').notNull(),
     registeredAt: instant('registered_at').notNull(),
     rev: integer('rev').notNull().default(1),
@@ -58,11 +58,11 @@ export const children = pgTable(
   (t) => [
     primaryKey({ columns: [t.hospitalId, t.id] }),
     unique('children_number').on(t.hospitalId, t.number),
-    index('children_family_key').on(t.hospitalId, t.familyKey),
+    index('children_surname_key').on(t.hospitalId, t.surnameKey),
     within('children_registered_by', t, t.registeredBy, accounts),
     oneOf('children_sex', t.sex, SEXES),
     someOf('children_flags', t.flags, FLAGS),
-    check('children_gestation_weeks', sql`${t.gestationWeeks} between 22 and 44`),
+    check('children_gestation_weeks', sql`${t.gestationWeeks} between 20 and 45`),
     check(
       'children_gestation_days',
       sql`${t.gestationDays} is null or (${t.gestationDays} between 0 and 6 and ${t.gestationWeeks} is not null)`,

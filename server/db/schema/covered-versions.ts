@@ -1,8 +1,8 @@
 import { KINDS } from '@shared/calc/types';
+import { URGENCIES } from '@shared/orders/form';
 import { VERSION_STATES } from '@shared/orders/states';
-import { integer, pgView, text, uuid } from 'drizzle-orm/pg-core';
+import { boolean, integer, pgView, text, uuid } from 'drizzle-orm/pg-core';
 import { instant } from '../columns';
-import { URGENCIES } from './orders';
 
 /**
  * What may be read of a version its checker has not signed: no content, no figure, no fluid, no author. The view
@@ -24,4 +24,5 @@ export const coveredVersions = pgView('covered_versions', {
   checkDueAt: instant('check_due_at'),
   askedChecker: uuid('asked_checker'),
   signedAt: instant('signed_at'),
+  isHighRisk: boolean('is_high_risk').notNull(),
 }).existing();

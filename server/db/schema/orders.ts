@@ -1,4 +1,5 @@
 import { KINDS, LINE_CLASSES } from '@shared/calc/types';
+import { URGENCIES } from '@shared/orders/form';
 import { isLive, VERSION_STATES } from '@shared/orders/states';
 import { ABSOLUTE } from '@shared/rulebook/absolute';
 import type { Kilograms, Millilitres, MillilitresPerHour, Minutes } from '@shared/units';
@@ -35,8 +36,6 @@ import { accounts } from './accounts';
 import { children } from './children';
 import { products } from './shelf';
 import { weights } from './weights';
-
-export const URGENCIES = ['routine', 'urgent', 'emergency'] as const;
 
 /** The code and the child; everything that changes is a version's. */
 export const orders = pgTable(
@@ -110,6 +109,12 @@ export const orderVersions = pgTable(
     signedAt: instant('signed_at'),
     /** When its checker signed it first; from then on it is open to the ward. */
     checkedAt: instant('checked_at'),
+    /** Given in an emergency and written down afterwards: when it was given. It stays a fact whatever follows. */
+    givenAt: instant('given_at'),
+    /** How many of the waiting check's reminders went out, 0 to 4. */
+    reminderStage: integer('reminder_stage').notNull().default(0),
+    /** When its author was told that it lapses soon. */
+    lapsingToldAt: instant('lapsing_told_at'),
     endedAt: instant('ended_at'),
     endReason: text('end_reason'),
     rev: integer('rev').notNull().default(1),
@@ -156,7 +161,7 @@ export const orderVersions = pgTable(
     ),
     check(
       'last_resort_bolus',
-      sql`${t.kind} <> 'bolus' or (${t.volumeMl} is null and ${t.content} is null) or (${t.volumeMl} is not null and ${t.weightKg} is not null and ${t.volumeMl} <= ${literal(ABSOLUTE.bolusMl)} and ${t.volumeMl} <= ${literal(ABSOLUTE.bolusMlPerKg)} * ${t.weightKg})`,
+      sql`${t.kind} <> 'bolus' or (${t.volumeMl} is null and ${t.content} is null) or (${t.volumeMl} is not null and ${t.volumeMl} <= ${literal(ABSOLUTE.bolusMl)} and case when ${t.weightKg} is null then ${t.urgency} = 'emergency' else ${t.volumeMl} <= ${literal(ABSOLUTE.bolusMlPerKg)} * ${t.weightKg} end)`,
     ),
     check(
       'last_resort_positive',

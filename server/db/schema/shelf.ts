@@ -1,6 +1,7 @@
+import { KINDS } from '@shared/calc/types';
 import { sql } from 'drizzle-orm';
 import { boolean, check, integer, pgTable, primaryKey, text, unique } from 'drizzle-orm/pg-core';
-import { decimal, hospitalId, instant, ownHospital, rowId } from '../columns';
+import { decimal, hospitalId, instant, ownHospital, rowId, someOf } from '../columns';
 import { hospitals } from './hospitals';
 
 const perLitre = (name: string) => decimal(name, 7, 2).notNull().default(0);
@@ -30,9 +31,9 @@ export const products = pgTable(
     bagSizes: integer('bag_sizes_ml').array().notNull(),
     isReadyMixed: boolean('is_ready_mixed').notNull().default(true),
     isHighRisk: boolean('is_high_risk').notNull().default(false),
-    /** Order kinds and line classes it is stocked for; empty means all that the rules allow. */
-    uses: text('uses').array().notNull().default([]),
-    lines: text('lines').array().notNull().default([]),
+    /** Order kinds it is stocked for. */
+    kinds: text('kinds', { enum: KINDS }).array().notNull(),
+    isNewbornOnly: boolean('is_newborn_only').notNull().default(false),
     gtins: text('gtins').array().notNull().default([]),
     position: integer('position').notNull().default(0),
     addedAt: instant('added_at').notNull(),
@@ -42,6 +43,7 @@ export const products = pgTable(
   (t) => [
     primaryKey({ columns: [t.hospitalId, t.id] }),
     unique('products_name').on(t.hospitalId, t.name),
+    someOf('products_kinds', t.kinds, KINDS),
     check('products_bag_sizes', sql`0 < all (${t.bagSizes})`),
     ownHospital(),
   ],

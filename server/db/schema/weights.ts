@@ -8,7 +8,7 @@ import { accounts } from './accounts';
 import { children } from './children';
 
 /** What a weight needs before an order may use it. */
-export const WEIGHT_NEEDS = ['nothing', 'second-reading', 'second-person'] as const;
+export const WEIGHT_NEEDS = ['nothing', 'second-measurement', 'second-person'] as const;
 
 /** A weight as it was entered. kg, method, time and author never change: a correction is a new row. */
 export const weights = pgTable(
@@ -24,10 +24,11 @@ export const weights = pgTable(
     recordedAt: instant('recorded_at').notNull(),
     /** Against the growth reference, two decimals; absent where there is none. */
     z: decimal('z', 5, 2),
-    /** Code of what looked wrong: pounds, slipped-point, z-beyond-3, … */
+    /** Code of what looked wrong when it was entered. */
     finding: text('finding'),
     needs: text('needs', { enum: WEIGHT_NEEDS }).notNull().default('nothing'),
     secondKg: decimal<Kilograms>('second_kg', 6, 3),
+    secondMethod: text('second_method', { enum: WEIGHT_METHODS }),
     secondAt: instant('second_at'),
     secondBy: uuid('second_by'),
     confirmedBy: uuid('confirmed_by'),
@@ -44,10 +45,14 @@ export const weights = pgTable(
     within('weights_confirmed_by', t, t.confirmedBy, accounts),
     within('weights_superseded_by', t, t.supersededBy, t),
     oneOf('weights_method', t.method, WEIGHT_METHODS),
+    oneOf('weights_second_method', t.secondMethod, WEIGHT_METHODS),
     oneOf('weights_needs', t.needs, WEIGHT_NEEDS),
     check('last_resort_weight', sql`${t.kg} > 0 and ${t.kg} <= ${literal(ABSOLUTE.weightKgMax)}`),
     check('weights_second_kg', sql`${t.secondKg} > 0 and ${t.secondKg} <= ${literal(ABSOLUTE.weightKgMax)}`),
-    check('weights_second', sql`num_nonnulls(${t.secondKg}, ${t.secondAt}, ${t.secondBy}) in (0, 3)`),
+    check(
+      'weights_second',
+      sql`num_nonnulls(${t.secondKg}, ${t.secondMethod}, ${t.secondAt}, ${t.secondBy}) in (0, 4)`,
+    ),
     check('weights_confirmed_by_another', sql`${t.confirmedBy} <> ${t.by}`),
     check('weights_confirmed', sql`(${t.confirmedBy} is null) = (${t.confirmedAt} is null)`),
     ownHospital(),
