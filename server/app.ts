@@ -1,0 +1,41 @@
+import express, { Router, type Express } from 'express';
+import { bindAccounts } from './accounts/routes';
+import { bindCspReports } from './http/csp-reports';
+import type { Deps } from './http/deps';
+import { logRequests } from './http/log-requests';
+import { noSuchRoute, problemHandler } from './http/problem';
+import { limitAll, limitSignIn, RATES, type Rates } from './http/rate-limit';
+import { sameOrigin } from './http/same-origin';
+import { neverStored, securityHeaders } from './http/security-headers';
+import { serveClient } from './http/static-files';
+
+/** Each noun puts its routes on the router. */
+const NOUNS: readonly ((router: Router) => void)[] = [bindAccounts];
+
+export type AppOptions = {
+  rates?: Rates;
+  /** The built client's folder; absent in tests of the API. */
+  client?: string;
+};
+
+/** The application on its dependencies: no port is opened, no worker started. */
+export function makeApp(deps: Deps, options: AppOptions = {}): Express {
+  const rates = options.rates ?? RATES;
+  const app = express();
+  app.locals.deps = deps;
+  app.disable('x-powered-by');
+  app.disable('etag');
+  app.set('trust proxy', 'loopback');
+  app.use(logRequests, securityHeaders(deps.env.PUBLIC_URL));
+  app.use('/api', neverStored, limitAll(rates));
+  const router = Router();
+  bindCspReports(router);
+  router.use('/api', sameOrigin, express.json({ limit: '256kb', strict: true }));
+  router.post('/api/sign-in', limitSignIn(rates));
+  for (const bindNoun of NOUNS) bindNoun(router);
+  router.use('/api', noSuchRoute);
+  app.use(router);
+  if (options.client !== undefined) serveClient(app, options.client);
+  app.use(problemHandler);
+  return app;
+}
