@@ -1,3 +1,4 @@
+/* eslint max-lines: ["error", 300] -- the contract of the calculation is read in one piece */
 import type { Instant } from '../time';
 import type {
   Hours,
@@ -46,7 +47,12 @@ export const WEIGHT_METHODS = [
   'birth-weight',
 ] as const;
 export type WeightMethod = (typeof WEIGHT_METHODS)[number];
-export const MEASURED_METHODS: readonly WeightMethod[] = ['scales', 'baby-scales', 'bed-scales', 'birth-weight'];
+export const MEASURED_METHODS: readonly WeightMethod[] = [
+  'scales',
+  'baby-scales',
+  'bed-scales',
+  'birth-weight',
+];
 
 export const LINE_CLASSES = ['peripheral', 'central', 'intraosseous'] as const;
 export type LineClass = (typeof LINE_CLASSES)[number];
@@ -80,6 +86,10 @@ export type FluidComposition = {
   bagSizes: Millilitres[];
   readyMixed: boolean;
   highRisk: boolean;
+  /** Where the shelf limits the product; absent means it says nothing. */
+  permittedKinds?: readonly Kind[];
+  permittedLines?: readonly LineClass[];
+  newbornOnly?: boolean;
 };
 
 export type ChildFacts = {
@@ -180,6 +190,10 @@ export type LimitFinding = {
   met: boolean;
   /** The author must give a reason before signing. */
   reasonOwed?: boolean;
+  /** The form field whose filling settles what is owed. */
+  owes?: 'fractionReason' | 'advisedBy';
+  /** Senior matter of an emergency kind: agreed afterwards, a countersignature due in 1 h; it never delays. */
+  deferred?: true;
   /** A legal value to offer as a button, in the field it belongs to. */
   offer?: { field: string; value: string; label: string };
   source: string;
@@ -242,7 +256,13 @@ export type WorkOut =
       calc: string;
       rulebook: number;
     }
-  | { ok: false; code: string; field?: string; detail: string; offer?: { field: string; value: string; label: string } };
+  | {
+      ok: false;
+      code: string;
+      field?: string;
+      detail: string;
+      offer?: { field: string; value: string; label: string };
+    };
 
 /** Units that only the `gives` use, re-exported so that a caller needs one import. */
 export type { KilocaloriesPerKgPerDay, MgPerKgPerMinute };
