@@ -116,9 +116,20 @@ function wallMs(at: Instant, zone: string): number {
 
 const offsetMs = (at: Instant, zone: string): number => wallMs(at, zone) - Math.floor(at / 1000) * 1000;
 
+const QUARTER = 15 * MINUTE;
+/** Since 1972 every zone is off UTC by whole quarters of an hour, so a day never changes within one. */
+const QUARTERS_SINCE = 2 * 366 * DAY;
+const lastQuarter = new Map<string, { quarter: number; date: string }>();
+
 /** The calendar day of a moment in the zone, 'YYYY-MM-DD'. */
-export const civilDate = (at: Instant, zone: string): string =>
-  new Date(wallMs(at, zone)).toISOString().slice(0, 10);
+export function civilDate(at: Instant, zone: string): string {
+  const quarter = Math.floor(at / QUARTER);
+  const last = lastQuarter.get(zone);
+  if (last?.quarter === quarter) return last.date;
+  const date = new Date(wallMs(at, zone)).toISOString().slice(0, 10);
+  if (at > QUARTERS_SINCE) lastQuarter.set(zone, { quarter, date });
+  return date;
+}
 
 /** Date and wall-clock minute in the zone, '2026-06-10T07:50': the value of a datetime-local field. */
 export const localDateTime = (at: Instant, zone: string): string =>
