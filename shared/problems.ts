@@ -43,6 +43,7 @@ export const PROBLEMS = {
   'key-reused': { status: 422, title: 'This request was used for something else' },
   conflict: { status: 409, title: 'Someone else was first' },
   'last-resort-limit': { status: 409, title: 'Stopped by the database’s own limit' },
+  'constraint-broken': { status: 409, title: 'The database refused this' },
   stale: { status: 409, title: 'Changed since this was shown' },
   'draft-moved': { status: 409, title: 'This draft was changed elsewhere' },
   'figures-moved': { status: 409, title: 'The figures have moved since they were shown' },
