@@ -1,6 +1,9 @@
 import { spawn } from 'node:child_process';
+import { setTimeout as sleep } from 'node:timers/promises';
 import { isAlive, processFacts } from './lock.mjs';
 import type { ProcessFacts } from './lock.mjs';
+
+const LEFT_OVER_MS = 5000;
 
 export type Ran = { code: number; stdout: string; stderr: string };
 
@@ -36,7 +39,7 @@ export type Child = {
   /** Resolves with the exit code, 1 after a signal. */
   exited: Promise<number>;
   hasExited(): boolean;
-  /** Asks with SIGTERM, insists with SIGKILL after `graceMs`; the second call waits for the first. */
+  /** Asks with SIGTERM, insists with SIGKILL after `graceMs` (0: kills at once); the second call waits for the first. */
   stop(graceMs?: number): Promise<void>;
 };
 
@@ -73,7 +76,7 @@ export function startChild(command: string, args: readonly string[], options: Ch
   let stopping: Promise<void> | undefined;
   const stop = async (graceMs: number) => {
     if (gone || pid <= 0) return;
-    signalGroup(pid, 'SIGTERM');
+    if (graceMs > 0) signalGroup(pid, 'SIGTERM');
     const timer = setTimeout(() => signalGroup(pid, 'SIGKILL'), graceMs);
     await exited;
     clearTimeout(timer);
@@ -88,6 +91,10 @@ export function startChild(command: string, args: readonly string[], options: Ch
 }
 
 /** Ends the process groups a killed start program left behind, if they are still the same processes. */
-export function endLeftOvers(left: readonly ProcessFacts[]): void {
-  for (const child of left) if (child.pid > 1 && isAlive(child)) signalGroup(child.pid, 'SIGTERM');
+export async function endLeftOvers(left: readonly ProcessFacts[]): Promise<void> {
+  const living = () => left.filter((child) => child.pid > 1 && isAlive(child));
+  for (const child of living()) signalGroup(child.pid, 'SIGTERM');
+  const until = Date.now() + LEFT_OVER_MS;
+  while (living().length > 0 && Date.now() < until) await sleep(50);
+  for (const child of living()) signalGroup(child.pid, 'SIGKILL');
 }

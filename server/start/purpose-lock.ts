@@ -22,7 +22,7 @@ export async function holdPurpose(
   const attempt = await takeLock(lockPath(purpose));
   if (!attempt.taken) return attempt;
   stops.onStop(() => attempt.lock.release());
-  endLeftOvers(attempt.left?.children ?? []);
+  await endLeftOvers(attempt.left?.children ?? []);
   return { taken: true, lock: attempt.lock };
 }
 

@@ -20,6 +20,11 @@ const main = ['--import', 'tsx', 'server/start/main.ts', ...process.argv.slice(2
 const child = spawn(process.execPath, main, { cwd: root, stdio: ['inherit', 'inherit', 'inherit', 'ipc'] });
 
 for (const signal of ['SIGINT', 'SIGTERM', 'SIGHUP']) process.on(signal, () => child.kill(signal));
+if (process.env.npm_lifecycle_event) {
+  // npm's shell dies of a signal without passing it on; then this process has another parent
+  const parent = process.ppid;
+  setInterval(() => process.ppid !== parent && child.kill('SIGTERM'), 500).unref();
+}
 child.on('error', (error) => {
   console.error(error.message);
   process.exit(1);

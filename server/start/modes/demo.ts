@@ -37,9 +37,12 @@ async function runServer(
 
 async function runOnPrivateServices(stops: Stops, lock: Lock): Promise<number> {
   const now = Date.now();
-  const cluster = await stops.track(startCluster('demo'), (started) => started.stop());
-  await prepareDemo(cluster, now);
-  await ensureBuilt();
+  const prepare = async () => {
+    const cluster = await stops.track(startCluster('demo'), (started) => started.stop());
+    await prepareDemo(cluster, now);
+    return cluster;
+  };
+  const [cluster] = await Promise.all([prepare(), ensureBuilt()]);
   const port = await choosePort(stateFolder('demo'), 'http', PREFERRED_PORT);
   const env = privateSettings(cluster, { nodeEnv: 'production', port });
   return runServer(stops, lock, env, () => announceDemo(`http://127.0.0.1:${port}`, now));
