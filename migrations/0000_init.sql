@@ -199,6 +199,8 @@ CREATE TABLE "exceptions" (
 	"read_back_to" uuid,
 	"countersign_due_at" timestamp (3) with time zone,
 	"countersigned_at" timestamp (3) with time zone,
+	"countersigned_by" uuid,
+	"overdue_told_at" timestamp (3) with time zone,
 	CONSTRAINT "exceptions_hospital_id_id_pk" PRIMARY KEY("hospital_id","id"),
 	CONSTRAINT "exceptions_state" CHECK ("exceptions"."state" in ('asked', 'granted', 'refused', 'void')),
 	CONSTRAINT "exceptions_how" CHECK ("exceptions"."how" in ('here', 'telephone')),
@@ -428,6 +430,9 @@ CREATE TABLE "order_versions" (
 	"lapses_at" timestamp (3) with time zone,
 	"signed_at" timestamp (3) with time zone,
 	"checked_at" timestamp (3) with time zone,
+	"given_at" timestamp (3) with time zone,
+	"reminder_stage" integer DEFAULT 0 NOT NULL,
+	"lapsing_told_at" timestamp (3) with time zone,
 	"ended_at" timestamp (3) with time zone,
 	"end_reason" text,
 	"rev" integer DEFAULT 1 NOT NULL,
@@ -649,6 +654,7 @@ ALTER TABLE "exceptions" ADD CONSTRAINT "exceptions_by_fk" FOREIGN KEY ("hospita
 ALTER TABLE "exceptions" ADD CONSTRAINT "exceptions_asked_of_fk" FOREIGN KEY ("hospital_id","asked_of") REFERENCES "public"."accounts"("hospital_id","id") ON DELETE no action ON UPDATE no action;--> statement-breakpoint
 ALTER TABLE "exceptions" ADD CONSTRAINT "exceptions_recorded_by_fk" FOREIGN KEY ("hospital_id","recorded_by") REFERENCES "public"."accounts"("hospital_id","id") ON DELETE no action ON UPDATE no action;--> statement-breakpoint
 ALTER TABLE "exceptions" ADD CONSTRAINT "exceptions_read_back_to_fk" FOREIGN KEY ("hospital_id","read_back_to") REFERENCES "public"."accounts"("hospital_id","id") ON DELETE no action ON UPDATE no action;--> statement-breakpoint
+ALTER TABLE "exceptions" ADD CONSTRAINT "exceptions_countersigned_by_fk" FOREIGN KEY ("hospital_id","countersigned_by") REFERENCES "public"."accounts"("hospital_id","id") ON DELETE no action ON UPDATE no action;--> statement-breakpoint
 ALTER TABLE "seen_figures" ADD CONSTRAINT "seen_figures_version_fk" FOREIGN KEY ("hospital_id","version_id") REFERENCES "public"."order_versions"("hospital_id","id") ON DELETE no action ON UPDATE no action;--> statement-breakpoint
 ALTER TABLE "seen_figures" ADD CONSTRAINT "seen_figures_account_fk" FOREIGN KEY ("hospital_id","account_id") REFERENCES "public"."accounts"("hospital_id","id") ON DELETE no action ON UPDATE no action;--> statement-breakpoint
 ALTER TABLE "children" ADD CONSTRAINT "children_hospital_id_hospitals_id_fk" FOREIGN KEY ("hospital_id") REFERENCES "public"."hospitals"("id") ON DELETE no action ON UPDATE no action;--> statement-breakpoint

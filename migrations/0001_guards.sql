@@ -56,11 +56,11 @@ BEGIN
   IF OLD.content IS NOT NULL AND
      (NEW.content, NEW.content_sha256, NEW.rulebook_number, NEW.product_id, NEW.is_high_risk, NEW.line_class,
       NEW.weight_id, NEW.weight_kg, NEW.rate_ml_h, NEW.volume_ml, NEW.over_min, NEW.planned_start, NEW.start_by,
-      NEW.lapses_at, NEW.signed_at, NEW.urgency, NEW.reason, NEW.asked_start)
+      NEW.lapses_at, NEW.signed_at, NEW.given_at, NEW.urgency, NEW.reason, NEW.asked_start)
      IS DISTINCT FROM
      (OLD.content, OLD.content_sha256, OLD.rulebook_number, OLD.product_id, OLD.is_high_risk, OLD.line_class,
       OLD.weight_id, OLD.weight_kg, OLD.rate_ml_h, OLD.volume_ml, OLD.over_min, OLD.planned_start, OLD.start_by,
-      OLD.lapses_at, OLD.signed_at, OLD.urgency, OLD.reason, OLD.asked_start)
+      OLD.lapses_at, OLD.signed_at, OLD.given_at, OLD.urgency, OLD.reason, OLD.asked_start)
   THEN
     RAISE EXCEPTION 'signed content never changes: revise makes a new version' USING ERRCODE = 'BL001';
   END IF;

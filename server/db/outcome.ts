@@ -1,6 +1,6 @@
 import type { LedgerNote } from '../ledger/entries';
 import type { nearMisses } from './schema/near-misses';
-import type { ProblemCode } from '@shared/problems';
+import type { FieldError, ProblemCode } from '@shared/problems';
 import type { Instant } from '@shared/time';
 
 /** One message to one account; `ref` holds ids only. */
@@ -14,8 +14,6 @@ export type Mail = {
 
 /** Something that was stopped. `dedupe` names it once per hospital, however often it is typed. */
 export type NearMiss = Omit<typeof nearMisses.$inferInsert, 'hospitalId' | 'id' | 'at' | 'by'>;
-
-export type FieldError = { pointer: string; detail: string };
 
 type Traces = { entries?: readonly LedgerNote[]; nearMisses?: readonly NearMiss[] };
 
