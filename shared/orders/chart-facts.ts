@@ -43,11 +43,19 @@ export function fluidOf(fluid: OrderContent['fluid'] | Product): FluidCompositio
     gluconate: mmolPerLitre(Number(fluid.gluconate)),
     glucoseGPerL: Number(fluid.glucoseGPerL),
     osmolarity: milliosmolesPerLitre(Number(fluid.osmolarity)),
-    bagSizes: 'bagSizesMl' in fluid ? fluid.bagSizesMl.map((ml) => millilitres(Number(ml))) : [],
+    bagSizes: [],
     readyMixed: fluid.readyMixed,
     highRisk: fluid.highRisk,
+    ...('bagSizesMl' in fluid && shelfFacts(fluid)),
   };
 }
+
+/** What only the shelf knows of a fluid: an order's own snapshot has no sizes and no permitted uses. */
+const shelfFacts = (product: Product) => ({
+  bagSizes: product.bagSizesMl.map((ml) => millilitres(Number(ml))),
+  permittedKinds: product.kinds,
+  newbornOnly: product.newbornOnly,
+});
 
 export const childFacts = (child: DraftContext['child']): ChildFacts => ({
   bornOn: child.bornOn,

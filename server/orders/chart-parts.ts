@@ -1,0 +1,79 @@
+import { decimalText } from '@shared/canonical';
+import { ageAt, ageText } from '@shared/children/age';
+import type { ChildHead, WeightRow } from '@shared/routes/children';
+import { toRfc3339, type Instant } from '@shared/time';
+import { staleText } from '@shared/weights/dosing';
+import { and, desc, eq, isNull } from 'drizzle-orm';
+import { alias } from 'drizzle-orm/pg-core';
+import { accounts } from '../db/schema/accounts';
+import { children, stays } from '../db/schema/children';
+import { wards } from '../db/schema/hospitals';
+import { weights } from '../db/schema/weights';
+import type { Tx } from '../db/transaction';
+
+/** The head of a child's page; null where there is no such child. */
+export async function loadChildHead(
+  tx: Tx,
+  childId: string,
+  now: Instant,
+  zone: string,
+): Promise<ChildHead | null> {
+  const [row] = await tx
+    .select({ child: children, bed: stays.bed, wardId: wards.id, wardName: wards.name })
+    .from(children)
+    .leftJoin(stays, and(eq(stays.childId, children.id), isNull(stays.to)))
+    .leftJoin(wards, eq(wards.id, stays.wardId))
+    .where(eq(children.id, childId));
+  if (row === undefined) return null;
+  const { child, bed, wardId, wardName } = row;
+  const bornAt = child.bornAt ?? undefined;
+  return {
+    id: child.id,
+    number: child.number,
+    surname: child.surname,
+    given: child.given,
+    bornOn: child.bornOn,
+    bornAt: child.bornAt === null ? null : toRfc3339(child.bornAt),
+    ageText: ageText(ageAt({ bornOn: child.bornOn, bornAt }, now, zone)),
+    sex: child.sex,
+    gestationWeeks: child.gestationWeeks,
+    gestationDays: child.gestationDays,
+    allergies: child.allergies,
+    flags: child.flags,
+    ward: wardId === null || wardName === null ? null : { id: wardId, name: wardName },
+    bed,
+    rev: child.rev,
+  };
+}
+
+/** A weight that looked wrong may be used once what it needed has been done. */
+export const isUsable = (row: Pick<typeof weights.$inferSelect, 'needs' | 'confirmedAt'>): boolean =>
+  row.needs === 'nothing' || row.confirmedAt !== null;
+
+/** The weights of a chart, newest first, corrected ones left out. */
+export async function loadWeights(
+  tx: Tx,
+  childId: string,
+  at: { now: Instant; isNewborn: boolean },
+): Promise<WeightRow[]> {
+  const confirmer = alias(accounts, 'confirmer');
+  const rows = await tx
+    .select({ weight: weights, recordedBy: accounts.name, confirmedBy: confirmer.name })
+    .from(weights)
+    .innerJoin(accounts, eq(accounts.id, weights.by))
+    .leftJoin(confirmer, eq(confirmer.id, weights.confirmedBy))
+    .where(and(eq(weights.childId, childId), isNull(weights.supersededBy)))
+    .orderBy(desc(weights.at), desc(weights.recordedAt))
+    .limit(50);
+  return rows.map(({ weight, recordedBy, confirmedBy }) => ({
+    id: weight.id,
+    kg: decimalText(weight.kg, 3),
+    method: weight.method,
+    at: toRfc3339(weight.at),
+    recordedBy,
+    confirmedBy,
+    z: weight.z === null ? null : decimalText(weight.z, 2),
+    usable: isUsable(weight),
+    stale: staleText(weight, at.now, at.isNewborn),
+  }));
+}
