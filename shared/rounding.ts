@@ -15,16 +15,21 @@ export type Steps = {
 };
 
 /** Drops the noise of binary arithmetic: 12 significant digits, more than any order can carry. */
-export const snap = (value: number): number =>
-  Number.isInteger(value) ? value : Number(value.toPrecision(12));
+export function snap(value: number): number {
+  if (Number.isInteger(value)) return value;
+  const short = Math.round(value * 1e6) / 1e6;
+  // a value this near to one of six decimals has it as its nearest of 12 digits; most have, and are spared the text
+  const isShort = Math.abs(value) < 1e5 && Math.abs(short - value) <= 1e-13 * Math.abs(value);
+  return isShort ? short : Number(value.toPrecision(12));
+}
 
 /** The nearest whole number, halves away from zero. */
 function nearestWhole(value: number): number {
   const size = Math.abs(value);
   const part = size - Math.floor(size);
   // snapping moves a value by less than this, so it matters only beside a half
-  const rounded =
-    size < 1e5 && Math.abs(part - 0.5) > 1e-6 ? Math.floor(size + 0.5) : Math.floor(snap(size) + 0.5);
+  const isClear = Math.abs(part - 0.5) > 1e-6 + size * 1e-11;
+  const rounded = Math.floor((isClear ? size : snap(size)) + 0.5);
   return value < 0 ? -rounded : rounded;
 }
 
@@ -114,10 +119,17 @@ const volumeStepAt = (rounded: number, steps: Steps): number =>
   above(rounded, steps.smallBelow) ? steps.volume : steps.smallVolume;
 
 /** A number as print has it: rounded, no trailing zeros, no thousands mark; "44", "52.1". */
-export const formatNumber = (value: number, decimals: number): string => {
-  const rounded = toDecimals(value, decimals);
-  return rounded === 0 ? '0' : String(rounded);
-};
+export function formatNumber(value: number, decimals: number): string {
+  const scale = 10 ** decimals;
+  const parts = nearestWhole(Math.abs(value) * scale);
+  const whole = Math.floor(parts / scale);
+  const sign = value < 0 && parts > 0 ? '-' : '';
+  let rest = parts - whole * scale;
+  if (rest === 0) return `${sign}${whole}`;
+  let places = decimals;
+  for (; rest % 10 === 0; places -= 1) rest /= 10;
+  return `${sign}${whole}.${String(rest).padStart(places, '0')}`;
+}
 
 /** A rate in print, mL/h without the unit. */
 export const formatRate = (rate: MillilitresPerHour): string => formatNumber(rate, 1);

@@ -18,15 +18,33 @@ export type CivilDate = { year: number; month: number; day: number };
 export const isLeapYear = (year: number): boolean => (year % 4 === 0 && year % 100 !== 0) || year % 400 === 0;
 
 const daysInMonth = (year: number, month: number): number =>
-  month === 2 ? (isLeapYear(year) ? 29 : 28) : [4, 6, 9, 11].includes(month) ? 30 : 31;
+  month === 2
+    ? isLeapYear(year)
+      ? 29
+      : 28
+    : month === 4 || month === 6 || month === 9 || month === 11
+      ? 30
+      : 31;
+
+/** The number that stands in `text` from one index to before another; NaN where that is not all digits. */
+function digits(text: string, from: number, to: number): number {
+  let value = 0;
+  for (let i = from; i < to; i += 1) {
+    const digit = text.charCodeAt(i) - 48;
+    if (!(digit >= 0 && digit <= 9)) return NaN;
+    value = value * 10 + digit;
+  }
+  return value;
+}
 
 /** The parts of 'YYYY-MM-DD', or undefined where the text is no day of the calendar (years 1000 to 9999). */
 export function parseCivilDate(text: string): CivilDate | undefined {
-  const match = /^([1-9]\d{3})-(\d{2})-(\d{2})$/.exec(text);
-  if (match === null) return undefined;
-  const [year, month, day] = match.slice(1).map(Number) as [number, number, number];
-  if (month < 1 || month > 12 || day < 1 || day > daysInMonth(year, month)) return undefined;
-  return { year, month, day };
+  if (text.length !== 10 || text[4] !== '-' || text[7] !== '-') return undefined;
+  const year = digits(text, 0, 4);
+  const month = digits(text, 5, 7);
+  const day = digits(text, 8, 10);
+  const isDay = year >= 1000 && month >= 1 && month <= 12 && day >= 1 && day <= daysInMonth(year, month);
+  return isDay ? { year, month, day } : undefined;
 }
 
 export const isCivilDate = (text: string): boolean => parseCivilDate(text) !== undefined;
