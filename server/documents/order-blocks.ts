@@ -104,8 +104,8 @@ export const childBlock = (sheet: Sheet, paper: OrderPaper, y: number): number =
         x: at(0),
         width: column * 1.3 - 12,
       },
-      { label: 'Allergies', value: child.allergies, x: at(1.7), width: column * 1.2 - 12 },
-      { label: 'Flags', value: flags, x: at(2.9), width: column * 1.1 },
+      { label: 'Allergies', value: child.allergies, x: at(2), width: column - 8 },
+      { label: 'Flags', value: flags, x: at(3), width: column },
     ],
     next,
   );

@@ -115,7 +115,7 @@ export async function orderPdf(paper: OrderPaper): Promise<Buffer> {
   y = cautionsBlock(sheet, paper, y);
   next(60 + paper.signatures.length * 34);
   y = signedBlock(sheet, paper, y);
-  next(136);
+  next(126);
   bedsideBlock(sheet, y);
   footBlock(sheet, paper);
   dressPages(sheet, paper);

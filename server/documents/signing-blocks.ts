@@ -71,11 +71,11 @@ export const bedsideBlock = (sheet: Sheet, y: number): number => {
   row += 24;
   for (const bag of [1, 2, 3]) {
     sheet.line(PAGE.left, row, PAGE.right, row, 0.7, INK.rule);
-    sheet.text(String(bag), PAGE.left, row + 5, { weight: 'semibold' });
+    sheet.text(String(bag), PAGE.left, row + 4, { weight: 'semibold' });
     for (const { x, box, rule } of BEDSIDE) {
       if (box)
         sheet.doc
-          .roundedRect(PAGE.left + x, row + 6, 14, 14, 2)
+          .roundedRect(PAGE.left + x, row + 5, 14, 14, 2)
           .lineWidth(1.4)
           .strokeColor(INK.ink)
           .stroke();
@@ -89,7 +89,7 @@ export const bedsideBlock = (sheet: Sheet, y: number): number => {
           INK.edge,
         );
     }
-    row += 27;
+    row += 24;
   }
   sheet.line(PAGE.left, row, PAGE.right, row, 0.7, INK.rule);
   return row + 10;

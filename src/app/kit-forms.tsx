@@ -83,6 +83,7 @@ function States() {
 
 export function KitFields() {
   const [kind, setKind] = useState('Maintenance');
+  const [when, setWhen] = useState('2026-06-10T07:50');
   return (
     <div className="grid gap-s6 wide:grid-cols-2">
       <form>
@@ -104,7 +105,12 @@ export function KitFields() {
           <Row>
             <NumberField label="Weight" unit="kg" defaultValue="16.4" width="w" />
             <SelectField label="How" width="w2" options={[{ value: 's', label: 'Standing scales' }]} />
-            <DateTimeField label="When" width="w2" defaultValue="2026-06-10T07:50" />
+            <DateTimeField
+              label="When"
+              width="w2"
+              value={when}
+              onChange={(event) => setWhen(event.target.value)}
+            />
           </Row>
         </Group>
         <Group head="Method">

@@ -3,9 +3,12 @@ import type { z } from 'zod';
 import { newKey, send } from './server-answer';
 
 type Route<N extends RouteName> = (typeof ROUTES)[N];
-type Part<R, K extends string> = R extends Record<K, infer S> ? (S extends z.ZodType ? z.input<S> : never) : never;
+type Part<R, K extends string> =
+  R extends Record<K, infer S> ? (S extends z.ZodType ? z.input<S> : never) : never;
 
-type Args<N extends RouteName> = (Route<N> extends { params: z.ZodType } ? { params: Part<Route<N>, 'params'> } : { params?: never }) &
+type Args<N extends RouteName> = (Route<N> extends { params: z.ZodType }
+  ? { params: Part<Route<N>, 'params'> }
+  : { params?: never }) &
   (Route<N> extends { body: z.ZodType } ? { body: Part<Route<N>, 'body'> } : { body?: never }) & {
     /** One key per intended act; made here when absent. */
     key?: string;
@@ -15,8 +18,8 @@ type Args<N extends RouteName> = (Route<N> extends { params: z.ZodType } ? { par
 
 export type Answer<N extends RouteName> = z.output<Route<N>['response']>;
 
-const fill = (path: string, params: Record<string, unknown> | undefined): string =>
-  path.replace(/:([a-z]+)/gi, (_match, name: string) => encodeURIComponent(String(params?.[name] ?? '')));
+const fill = (path: string, params: Record<string, string> | undefined): string =>
+  path.replace(/:([a-z]+)/gi, (_match, name: string) => encodeURIComponent(params?.[name] ?? ''));
 
 /**
  * Asks one route of the registry and parses its answer.
@@ -25,7 +28,7 @@ const fill = (path: string, params: Record<string, unknown> | undefined): string
 export async function call<N extends RouteName>(name: N, args: Args<N>): Promise<Answer<N>> {
   const route = ROUTES[name];
   const { params, body, key, background, signal } = args as {
-    params?: Record<string, unknown>;
+    params?: Record<string, string>;
     body?: unknown;
     key?: string;
     background?: boolean;

@@ -18,4 +18,5 @@ export const queryClient = new QueryClient({
 });
 
 export const isUnreachable = (error: unknown): boolean => error instanceof UnreachableError;
-export const problemCode = (error: unknown): string | null => (error instanceof ProblemError ? error.code : null);
+export const problemCode = (error: unknown): string | null =>
+  error instanceof ProblemError ? error.code : null;

@@ -16,4 +16,6 @@ export const useMe = () => useQuery(meQuery);
 export const useKnownMe = (): Me => useSuspenseQuery(meQuery).data;
 
 /** After any answer that says who is signed in. */
-export const setMe = (me: Me): void => queryClient.setQueryData(meQuery.queryKey, me);
+export const setMe = (me: Me): void => {
+  queryClient.setQueryData(meQuery.queryKey, me);
+};

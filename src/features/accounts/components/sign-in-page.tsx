@@ -8,7 +8,8 @@ export const safeNext = (next: string | null): string => (next && /^\/(?![/\\])/
 
 const messageOf = (error: unknown): string => {
   if (error instanceof ProblemError) return error.problem.detail || error.problem.title;
-  if (error instanceof UnreachableError) return 'The server did not answer. Nothing was sent. Try again in a moment.';
+  if (error instanceof UnreachableError)
+    return 'The server did not answer. Nothing was sent. Try again in a moment.';
   return 'Something went wrong on this page. Load it again.';
 };
 
@@ -54,7 +55,9 @@ export function SignInPage() {
           <Mark /> Brimline
         </p>
         <h1 id="sign-in-head">Sign in</h1>
-        <p className="soft">Intravenous fluid orders, checked by a second person who has not seen the answer.</p>
+        <p className="soft">
+          Intravenous fluid orders, checked by a second person who has not seen the answer.
+        </p>
         {message && (
           <p className="err" role="alert" tabIndex={-1} ref={alert}>
             {message}
@@ -89,8 +92,8 @@ export function SignInPage() {
           {isBusy ? 'Signing in, please wait' : 'Sign in'}
         </button>
         <p className="tag">
-          Brimline supports, and does not replace, clinical judgement. Follow local policy. Only licensed clinicians
-          prescribe, check and give.
+          Brimline supports, and does not replace, clinical judgement. Follow local policy. Only licensed
+          clinicians prescribe, check and give.
         </p>
       </form>
     </main>
