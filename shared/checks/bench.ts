@@ -9,8 +9,6 @@ import type { CheckContext } from './own';
 export type Bench = {
   content: OrderContent;
   context: CheckContext;
-  /** The moment the author's figures were worked out for: bands by age hold at that time. */
-  authorContext: CheckContext;
   rules: RuleValues['check'];
   steps: Steps;
 };

@@ -4,7 +4,8 @@ import { ruleValues } from '../rulebook/read';
 import { millilitres, millilitresPerKg, minutes, type Kilograms } from '../units';
 import { apartBy, comparedRow, keepsBrims, type Bench, type KindComparison } from './bench';
 import { effectOfBolus } from './effect';
-import { findProduct, isSameClass, readFluid } from './fluid';
+import { fluidOf } from '../orders/chart-facts';
+import { findProduct, isSameClass } from './fluid';
 import type { ComparedRow } from './form';
 import { orderOf, workOutOn } from './own';
 import type { BolusEntries } from './read-form';
@@ -22,12 +23,7 @@ export function compareBolus(bench: Bench, kg: Kilograms, entries: BolusEntries)
   const over = Number(content.inputs.overMinutes);
   const order = orderOf(entries, context.products);
   const own = order === undefined ? undefined : workOutOn(kg, order, context, content.line);
-  const authorOnCheckers = workOutOn(
-    kg,
-    authorOrder(bench, content.inputs),
-    bench.authorContext,
-    content.line,
-  );
+  const authorOnCheckers = workOutOn(kg, authorOrder(bench, content.inputs), context, content.line);
   const recomputed = workedVolume(authorOnCheckers);
   const rows = [
     fluidRow(bench, entries),
@@ -60,7 +56,7 @@ export function compareBolus(bench: Bench, kg: Kilograms, entries: BolusEntries)
 
 function fluidRow({ content, context }: Bench, entries: BolusEntries): ComparedRow {
   const fluid = findProduct(context.products, entries.base, 0);
-  const ordered = readFluid(content.fluid);
+  const ordered = fluidOf(content.fluid);
   const sameClass =
     fluid !== undefined && isSameClass(ordered, fluid, ruleValues(context.rulebook, 'tonicity'));
   return comparedRow(
@@ -87,7 +83,7 @@ function authorOrder({ content }: Bench, inputs: AuthorInputs): BolusOrder {
     dose,
     over: minutes(Number(inputs.overMinutes)),
     route: inputs.route,
-    fluid: readFluid(content.fluid),
+    fluid: fluidOf(content.fluid),
     ...(inputs.advisedBy === null ? {} : { advisedBy: inputs.advisedBy }),
   };
 }

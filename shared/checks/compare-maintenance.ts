@@ -5,7 +5,8 @@ import { hours, millilitres, millilitresPerHour, type Kilograms } from '../units
 import { apartBy, comparedRow, keepsBrims, type Bench, type KindComparison } from './bench';
 import { comparePlan } from './compare-plan';
 import { effectOfMaintenance } from './effect';
-import { findProduct, isSameClass, readFluid } from './fluid';
+import { fluidOf } from '../orders/chart-facts';
+import { findProduct, isSameClass } from './fluid';
 import type { ComparedRow } from './form';
 import { orderOf, workOutOn } from './own';
 import type { MaintenanceEntries } from './read-form';
@@ -39,7 +40,7 @@ export function compareMaintenance(bench: Bench, kg: Kilograms, entries: Mainten
   const authorOnCheckers = workOutOn(
     kg,
     { ...author.order, feeds: entries.feeds, drugs: entries.drugs, typedRate: undefined },
-    bench.authorContext,
+    context,
     content.line,
   );
   const choices = [
@@ -79,7 +80,7 @@ function authorOf({ content, steps }: Bench, inputs: AuthorInputs): Author {
       feeds: millilitres(Number(inputs.feedsMl)),
       drugs: millilitres(Number(inputs.drugsMl)),
       hours: hours(Number(inputs.hours)),
-      fluid: readFluid(content.fluid),
+      fluid: fluidOf(content.fluid),
       ...(inputs.fractionReason === null ? {} : { fractionReason: inputs.fractionReason }),
     },
     rate: Number(figures.rateMlPerH),

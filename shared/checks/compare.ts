@@ -18,12 +18,10 @@ export function compareCheck(
   content: OrderContent,
   entries: CheckEntries,
   context: CheckContext,
-  authorContext: CheckContext = context,
 ): Comparison {
   const bench: Bench = {
     content,
     context,
-    authorContext,
     rules: ruleValues(context.rulebook, 'check'),
     steps: stepsOf(context.rulebook),
   };

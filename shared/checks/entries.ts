@@ -195,7 +195,7 @@ const MAINTENANCE: readonly CheckEntry[] = [
     label: 'Over',
     nature: 'choice',
     note: '24 h at most.',
-    control: decimal(1, 0.5, 24, 'h'),
+    control: decimal(0, 1, 24, 'h'),
     group: 'order',
   },
   WAY,

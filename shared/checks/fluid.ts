@@ -1,34 +1,5 @@
-import type { z } from 'zod';
 import type { FluidComposition } from '../calc/types';
-import type { contentFluidSchema } from '../orders/content';
 import { atMost, below } from '../rounding';
-import { milliosmolesPerLitre, millilitres, mmolPerLitre } from '../units';
-
-type ContentFluid = z.infer<typeof contentFluidSchema>;
-
-/** A fluid of the wire or of signed content as the calculation takes it. */
-export function readFluid(fluid: ContentFluid & { bagSizesMl?: readonly string[] }): FluidComposition {
-  const salt = (text: string) => mmolPerLitre(Number(text));
-  return {
-    id: fluid.id,
-    name: fluid.name,
-    base: fluid.base,
-    addedPotassium: salt(fluid.addedPotassium),
-    sodium: salt(fluid.sodium),
-    potassium: salt(fluid.potassium),
-    chloride: salt(fluid.chloride),
-    calcium: salt(fluid.calcium),
-    magnesium: salt(fluid.magnesium),
-    lactate: salt(fluid.lactate),
-    acetate: salt(fluid.acetate),
-    gluconate: salt(fluid.gluconate),
-    glucoseGPerL: Number(fluid.glucoseGPerL),
-    osmolarity: milliosmolesPerLitre(Number(fluid.osmolarity)),
-    bagSizes: (fluid.bagSizesMl ?? []).map((size) => millilitres(Number(size))),
-    readyMixed: fluid.readyMixed,
-    highRisk: fluid.highRisk,
-  };
-}
 
 /** The stocked product of a base with that much ready-mixed potassium, mmol/L. */
 export const findProduct = (
