@@ -1,8 +1,9 @@
-import { readFileSync, writeFileSync } from 'node:fs';
+import { readFileSync } from 'node:fs';
 import { join } from 'node:path';
 import { DATABASE } from './databases';
 import type { Databases } from './databases';
 import { stateFolder } from './paths';
+import { replaceFile } from './replace-file';
 import { say, Told } from './tell';
 
 const DAY_MS = 86_400_000;
@@ -21,7 +22,7 @@ function readNote(folder: string): SeedNote | null {
 }
 
 const writeNote = (folder: string, note: SeedNote) =>
-  writeFileSync(notePath(folder), `${JSON.stringify(note)}\n`);
+  replaceFile(notePath(folder), `${JSON.stringify(note)}\n`);
 
 /** Brings the schema of a database up to date. */
 export async function migrateDatabase(ownerUrl: string): Promise<void> {

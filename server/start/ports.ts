@@ -1,6 +1,7 @@
-import { readFileSync, renameSync, writeFileSync } from 'node:fs';
+import { readFileSync } from 'node:fs';
 import { createServer } from 'node:net';
 import { join } from 'node:path';
+import { replaceFile } from './replace-file';
 
 const LOOPBACK = '127.0.0.1';
 
@@ -50,9 +51,7 @@ export const rememberedPort = (folder: string, name: string): number | undefined
 export function rememberPort(folder: string, name: string, port: number): void {
   const path = memoryPath(folder);
   const ports = { ...readPorts(path), [name]: port };
-  // replaced, not rewritten: another user's file can be replaced in one's own folder
-  writeFileSync(`${path}.new`, `${JSON.stringify(ports, null, 2)}\n`);
-  renameSync(`${path}.new`, path);
+  replaceFile(path, `${JSON.stringify(ports, null, 2)}\n`);
 }
 
 /** The remembered port if free, else the preferred one if free, else any free one; remembered. */

@@ -6,6 +6,7 @@ import type { Holder, Lock } from './lock.mjs';
 import { stateFolder } from './paths';
 import type { Purpose } from './paths';
 import type { Stops } from './stops';
+import { Told } from './tell';
 
 const STARTING_MS = 120_000;
 
@@ -19,7 +20,12 @@ export async function holdPurpose(
   purpose: Purpose,
   stops: Stops,
 ): Promise<{ taken: true; lock: Lock } | { taken: false; holder: Holder }> {
-  const attempt = await takeLock(lockPath(purpose));
+  const attempt = await takeLock(lockPath(purpose)).catch((error: NodeJS.ErrnoException) => {
+    if (error.code !== 'EACCES') throw error;
+    throw new Told(
+      `${stateFolder(purpose)} belongs to another user. Start as that user, or remove the folder.`,
+    );
+  });
   if (!attempt.taken) return attempt;
   stops.onStop(() => attempt.lock.release());
   await endLeftOvers(attempt.left?.children ?? []);
