@@ -1,15 +1,6 @@
-import {
-  type BolusOrder,
-  type FluidComposition,
-  type Kind,
-  type MaintenanceOrder,
-  type WorkOutRequest,
-} from '../calc/types';
-import { ageAt, type Age } from '../children/age';
-import { above } from '../rounding';
+import { propose, type BolusProposal, type MaintenanceProposal } from '../calc/propose';
+import type { FluidComposition, Kind, OrderInputs, WorkOutRequest } from '../calc/types';
 import type { DraftContext } from '../routes/orders';
-import { ruleValues } from '../rulebook/read';
-import type { Rulebook } from '../rulebook/document';
 import { HOUR, instant, localDateTime, MINUTE, parseInstant, type Instant } from '../time';
 import { hours, millilitres, millilitresPerKg, minutes } from '../units';
 import { dosingWeight, type DosingChoice } from '../weights/dosing';
@@ -49,119 +40,81 @@ function nowOf({ now }: Pick<DraftContext, 'now'>): Instant {
 
 /**
  * The first form of a new draft. What has to be stated (feeds, drugs, the reason) stays empty; what is proposed is
- * never past a limit.
+ * never past a limit. Without a usable weight, or for a child out of scope, only the bare form.
  */
 export function proposeForm(kind: Kind, context: DraftContext): OrderForm {
-  const rulebook = rulebookOf(context);
   const at = nowOf(context);
-  const facts = chartFacts(context);
-  const weight = proposeWeight(context, at);
-  const age = ageAt(facts.child, at, context.zone);
-  const form = { ...emptyOrderForm(kind), line: 'peripheral', weightId: weight?.weight.id ?? '' };
-  const scene: Scene | undefined = weight && {
-    request: { ...facts, at, line: 'peripheral', weight: dosingFacts(weight.weight.row) },
-    fluids: context.products.map(fluidOf),
-    rulebook,
-    age,
-    isEstimate: weight.isEstimate,
+  const weight = proposeWeight(context, at)?.weight.row;
+  const form: OrderForm = {
+    ...emptyOrderForm(kind),
+    ...proposeTimes(kind, context),
+    line: 'peripheral',
+    // a bolus is for shock: it does not wait its turn
+    urgency: kind === 'bolus' ? 'urgent' : 'routine',
+    weightId: weight?.id ?? '',
   };
-  return kind === 'maintenance'
-    ? proposeMaintenance(form, context, { rulebook, age, scene })
-    : proposeBolus(form, context, { rulebook, age, scene });
+  if (weight === undefined) return form;
+  const before: BeforeOrder = {
+    ...chartFacts(context),
+    at,
+    line: 'peripheral',
+    weight: dosingFacts(weight),
+  };
+  const proposal = propose(kind, before, rulebookOf(context));
+  if (!('kind' in proposal)) return form;
+  const fields =
+    proposal.kind === 'maintenance' ? maintenanceFields(proposal, context) : bolusFields(proposal);
+  return { ...form, ...fields, productId: proposedProduct(proposal, before, context) };
 }
 
-type Scene = {
-  request: Omit<WorkOutRequest, 'order'>;
-  fluids: readonly FluidComposition[];
-  rulebook: Rulebook;
-  age: Age;
-  isEstimate: boolean;
-};
-type Known = { rulebook: Rulebook; age: Age; scene: Scene | undefined };
-
-type ChartRow = Parameters<typeof dosingWeight>[0][number] & {
-  id: string;
-  row: DraftContext['weights'][number];
-};
+type BeforeOrder = Omit<WorkOutRequest, 'order'>;
+type ChartRow = ReturnType<typeof dosingFacts> & { usable: boolean; row: DraftContext['weights'][number] };
 
 function proposeWeight(context: DraftContext, at: Instant): DosingChoice<ChartRow> | undefined {
-  const rows = context.weights.map((row) => ({ ...dosingFacts(row), id: row.id, usable: row.usable, row }));
+  const rows = context.weights.map((row) => ({ ...dosingFacts(row), usable: row.usable, row }));
   return dosingWeight<ChartRow>(rows, chartFacts(context).child, at, context.zone);
 }
 
-function proposeMaintenance(
-  form: OrderForm,
+const maintenanceFields = (proposal: MaintenanceProposal, context: DraftContext): Partial<OrderForm> => ({
+  ...proposeTimes('maintenance', context, proposal.hours),
+  method: proposal.method,
+  fraction: proposal.fraction ?? '',
+  newbornMlPerKgPerDay:
+    proposal.newbornMlPerKgPerDay === undefined ? '' : String(proposal.newbornMlPerKgPerDay),
+  hours: String(Math.floor(proposal.hours)),
+});
+
+const bolusFields = (proposal: BolusProposal): Partial<OrderForm> => ({
+  ...(proposal.volumeMl === undefined
+    ? { doseBy: 'weight', mlPerKg: String(proposal.mlPerKg) }
+    : { doseBy: 'volume', volumeMl: String(proposal.volumeMl) }),
+  overMinutes: String(proposal.overMinutes),
+  route: 'syringe',
+});
+
+function proposedProduct(
+  proposal: MaintenanceProposal | BolusProposal,
+  before: BeforeOrder,
   context: DraftContext,
-  { rulebook, age, scene }: Known,
-): OrderForm {
-  const method = age.isNewborn ? 'newborn' : ruleValues(rulebook, 'maintenance').method;
-  const fraction = proposeFraction(context, rulebook);
-  const life = lifeHours(scene, rulebook);
-  const order = (fluid: FluidComposition): MaintenanceOrder => ({
-    kind: 'maintenance',
-    method: method as MaintenanceOrder['method'],
-    fraction: fraction || 'full',
-    feeds: millilitres(0),
-    drugs: millilitres(0),
-    hours: hours(life),
-    fluid,
-  });
-  const fluid = scene && proposeFluid(scene.request, order, scene.fluids, rulebook);
-  return {
-    ...form,
-    ...proposeTimes('maintenance', context, life),
-    method,
-    fraction,
-    productId: fluid?.id ?? '',
-    hours: String(life),
-    urgency: 'routine',
-  };
-}
-
-/** A day; half of it on a weight that was not measured. */
-function lifeHours(scene: Scene | undefined, rulebook: Rulebook): number {
-  const { hoursMost } = ruleValues(rulebook, 'maintenance');
-  const shortened = Math.floor(hoursMost / ruleValues(rulebook, 'weight').lifeDivisor);
-  return scene?.isEstimate ? shortened : hoursMost;
-}
-
-/** By the plan on the chart, else by the flags; heart, kidney and liver trouble are asked about, never full by default. */
-function proposeFraction(context: DraftContext, rulebook: Rulebook): MaintenanceOrder['fraction'] | '' {
-  const plan = chartFacts(context).plan;
-  if (plan?.kind === 'fraction') return plan.fraction;
-  const { flags } = context.child;
-  if (flags.includes('cardiac') || flags.includes('renal') || flags.includes('hepatic')) return '';
-  return flags.includes('raised-adh') ? ruleValues(rulebook, 'fraction').raisedAdh : 'full';
-}
-
-function proposeBolus(form: OrderForm, context: DraftContext, { rulebook, age, scene }: Known): OrderForm {
-  const rules = ruleValues(rulebook, 'bolus');
-  const { flags } = context.child;
-  const isCareful = flags.includes('cardiac') || flags.includes('renal') || flags.includes('low-albumin');
-  const mlPerKg = isCareful
-    ? rules.carefulMlPerKg
-    : age.isNewborn
-      ? rules.newbornMlPerKg
-      : rules.childMlPerKg;
-  const volume = mlPerKg * (scene?.request.weight.kg ?? 0);
-  const dose = above(volume, rules.brimMl)
-    ? { doseBy: 'volume', volumeMl: String(rules.brimMl) }
-    : { doseBy: 'weight', mlPerKg: String(mlPerKg) };
-  const order = (fluid: FluidComposition): BolusOrder => ({
-    kind: 'bolus',
-    dose: { by: 'weight', mlPerKg: millilitresPerKg(mlPerKg) },
-    over: minutes(rules.overMinutes),
-    route: 'syringe',
-    fluid,
-  });
-  const fluid = scene && proposeFluid(scene.request, order, scene.fluids, rulebook);
-  return {
-    ...form,
-    ...dose,
-    ...proposeTimes('bolus', context),
-    overMinutes: String(rules.overMinutes),
-    route: 'syringe',
-    productId: fluid?.id ?? '',
-    urgency: 'urgent',
-  };
+): string {
+  const order = (fluid: FluidComposition): OrderInputs =>
+    proposal.kind === 'maintenance'
+      ? {
+          kind: 'maintenance',
+          method: proposal.method,
+          fraction: proposal.fraction ?? 'full',
+          feeds: millilitres(0),
+          drugs: millilitres(0),
+          hours: hours(proposal.hours),
+          fluid,
+        }
+      : {
+          kind: 'bolus',
+          dose: { by: 'weight', mlPerKg: millilitresPerKg(proposal.mlPerKg) },
+          over: minutes(proposal.overMinutes),
+          route: 'syringe',
+          fluid,
+        };
+  const fluid = proposeFluid(before, order, context.products.map(fluidOf), rulebookOf(context));
+  return fluid?.id ?? '';
 }
