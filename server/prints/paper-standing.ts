@@ -1,0 +1,57 @@
+import type { Actor } from '@shared/accounts/actor';
+import { isOnWard } from '@shared/accounts/actor';
+import { maySee } from '@shared/orders/coverage';
+import { isOverdue, isSigned, STATE_WORDS } from '@shared/orders/states';
+import { toRfc3339, type Instant } from '@shared/time';
+import type { z } from 'zod';
+import type { ROUTES } from '@shared/routes';
+import type { Tx } from '../db/transaction';
+import { loadFacts } from '../orders/facts';
+import { findByCode, findStanding } from './queries';
+import { isCurrent } from './watermark';
+
+type Standing = z.input<(typeof ROUTES)['paper']['response']>;
+
+export const UNKNOWN_PAPER: Standing = {
+  known: false,
+  isCurrent: false,
+  words: 'No paper was printed under this code. Do not follow it.',
+  version: null,
+  printedAt: null,
+  order: null,
+};
+
+const wordsFor = (current: boolean, state: keyof typeof STATE_WORDS): string =>
+  current
+    ? 'This paper is current.'
+    : `This paper is not current (${STATE_WORDS[state].toLowerCase()}). Do not follow it.`;
+
+/** A stranger hears current or not and the version; who may see the order also gets the way to it. */
+export async function paperStanding(
+  tx: Tx,
+  code: string,
+  actor: Actor | null,
+  now: Instant,
+): Promise<Standing> {
+  const print = await findByCode(tx, code);
+  const standing = print && (await findStanding(tx, print.versionId));
+  if (!print || !standing) return UNKNOWN_PAPER;
+  const late = isOverdue(standing.state, standing.lapsesAt, now);
+  const missedStart = isSigned(standing.state) && standing.startBy !== null && now > standing.startBy;
+  const current = isCurrent(standing.state) && !late && !missedStart;
+  return {
+    known: true,
+    isCurrent: current,
+    words: late ? 'This order is past its time. Ask before the next bag.' : wordsFor(current, standing.state),
+    version: standing.version,
+    printedAt: toRfc3339(print.at),
+    order: actor === null ? null : await orderFor(tx, actor, print.versionId, now),
+  };
+}
+
+async function orderFor(tx: Tx, actor: Actor, versionId: string, now: Instant): Promise<Standing['order']> {
+  const loaded = await loadFacts(tx, actor, versionId, now);
+  if (loaded === null || loaded.ward === null || !isOnWard(actor, loaded.ward.id) || !maySee(loaded.coverage))
+    return null;
+  return { versionId, code: loaded.code };
+}
