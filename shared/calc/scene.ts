@@ -6,9 +6,12 @@ import type { WorkOut, WorkOutRequest } from './types';
 
 export type Refusal = Extract<WorkOut, { ok: false }>;
 
+/** What is known before anything is chosen. */
+export type BeforeOrder = Omit<WorkOutRequest, 'order'>;
+
 /** One request with everything the rules ask about it, looked up once. */
-export type Scene = {
-  request: WorkOutRequest;
+export type Scene<Request extends BeforeOrder = WorkOutRequest> = {
+  request: Request;
   rules: RuleValues;
   sources: OpenRulebook['sources'];
   rulebook: number;
@@ -48,7 +51,11 @@ export function stepsIn(rules: RuleValues): Steps {
 }
 
 /** Sets the scene, or refuses a child outside the scope of clinical use. */
-export function setScene(request: WorkOutRequest, open: OpenRulebook, emergency: boolean): Scene | Refusal {
+export function setScene<Request extends BeforeOrder>(
+  request: Request,
+  open: OpenRulebook,
+  emergency: boolean,
+): Scene<Request> | Refusal {
   const { child, at, zone } = request;
   const scope = inScope(child, at, zone, { maxYears: open.values.scope.untilYears, emergency });
   if (!scope.ok)

@@ -3,7 +3,7 @@ import { openRulebook, silentOn } from '../rulebook/read';
 import { KIND_MODULES } from './kinds';
 import type { KindModule } from './kinds';
 import { isRefusal, refuse, setScene } from './scene';
-import type { Refusal, Scene } from './scene';
+import type { BeforeOrder, Refusal, Scene } from './scene';
 import type { WorkOut, WorkOutRequest } from './types';
 
 /** Works an order out under a rulebook: figures, workings and limits, or a coded refusal; never a default or a clamp. */
@@ -15,11 +15,11 @@ export function workOut(request: WorkOutRequest, rulebook: Rulebook): WorkOut {
 }
 
 /** The scene of a request, or why there is none: a silent rulebook or a child outside the scope. */
-export function openScene(
-  request: WorkOutRequest,
+export function openScene<Request extends BeforeOrder>(
+  request: Request,
   rulebook: Rulebook,
   { needs, emergency }: Pick<KindModule, 'needs' | 'emergency'>,
-): Scene | Refusal {
+): Scene<Request> | Refusal {
   const open = openRulebook(rulebook);
   const silent = silentOn(open, needs);
   if (silent !== undefined) {

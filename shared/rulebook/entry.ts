@@ -19,7 +19,7 @@ export const number = (
 ): NumberEntry => ({ type: 'number', value, unit, min, max, source, certainty, label });
 
 /** A rulebook choice among a few words. */
-export const choice = <Choice extends string>(
+export const choice = <const Choice extends string>(
   value: Choice,
   choices: readonly Choice[],
   label: string,

@@ -5,18 +5,18 @@ import type { BolusFacts } from '../facts';
 import { circulatingPerKg } from '../gives';
 import { isCareful } from '../limits/bolus-dose';
 import { nextLine } from '../rate-line';
-import type { Scene } from '../scene';
+import type { BeforeOrder, Scene } from '../scene';
 import { printed, step, YOUR_CHOICE } from '../step';
 import type { BolusFigures, BolusOrder, Step } from '../types';
 
 /** The dose the program proposes, mL/kg: 10, with heart, kidney or albumin trouble 5; NICE NG29 1.3. */
-export function proposedDose({ request, rules, age }: Pick<Scene, 'request' | 'rules' | 'age'>): number {
+export function proposedDose({ request, rules, age }: Scene<BeforeOrder>): number {
   if (isCareful(request.child.flags)) return rules.bolus.carefulMlPerKg;
   return age.isNewborn ? rules.bolus.newbornMlPerKg : rules.bolus.childMlPerKg;
 }
 
 /** Every line one dose may meet, mL: its cautions, its brims, the totals of 24 h. */
-function doseLines(scene: Scene): number[] {
+function doseLines(scene: Scene<BeforeOrder>): number[] {
   const { carefulMlPerKg, cautionMlPerKg, brimMlPerKg, brimMl, totalSenior, totalAdvice } = scene.rules.bolus;
   const { kg } = scene.request.weight;
   const given = bolusesOf24h(scene);
@@ -31,7 +31,7 @@ function doseLines(scene: Scene): number[] {
 }
 
 /** A dose by weight at the volume step; rounding alone never carries it past a line, mL. */
-function doseVolume(scene: Scene, dose: number): number {
+export function doseVolume(scene: Scene<BeforeOrder>, dose: number): number {
   const exact = millilitres(snap(dose * scene.request.weight.kg));
   return roundVolumeUnder(exact, nextLine(exact, doseLines(scene)), scene.steps);
 }

@@ -61,7 +61,7 @@ export function workOutBolus(scene: Scene, order: BolusOrder): WorkOut {
     otherBrims: bolusBrims(facts),
     gauge: {
       orderMl: figures.volume,
-      brimMl: bolusBrim(facts),
+      brimMl: bolusBrim(scene),
       brimNote: 'in one bolus',
       bands: [],
       ghosts: [],

@@ -1,16 +1,17 @@
 import { above, atLeast, formatNumber, largestVolume } from '../../rounding';
-import type { BolusFacts, BolusLimit } from '../facts';
+import type { BolusLimit } from '../facts';
 import { broken, kept } from '../findings';
+import type { BeforeOrder, Scene } from '../scene';
 
 /** The brim of one dose, mL: 20 mL/kg and 500 mL, whichever is less; NICE NG29 1.3 and common practice. */
-export const bolusBrim = ({ scene }: Pick<BolusFacts, 'scene'>): number =>
-  Math.min(scene.rules.bolus.brimMl, scene.rules.bolus.brimMlPerKg * scene.request.weight.kg);
+export const bolusBrim = ({ rules, request }: Scene<BeforeOrder>): number =>
+  Math.min(rules.bolus.brimMl, rules.bolus.brimMlPerKg * request.weight.kg);
 
 /** One dose against its brim. */
 export const bolusDoseLimit: BolusLimit = (facts, found) => {
   const { scene, volume } = facts;
   const { brimMl, brimMlPerKg } = scene.rules.bolus;
-  const brim = bolusBrim(facts);
+  const brim = bolusBrim(scene);
   const most = largestVolume(brim, scene.steps);
   const printed = formatNumber(most, 1);
   const source = brim < brimMl ? scene.sources.bolus.brimMlPerKg : scene.sources.bolus.brimMl;
