@@ -49,6 +49,9 @@ export const isGiven = (state: VersionState): boolean => state === 'given' || st
 /** Ended for good: no act leads out of it. */
 export const isEnded = (state: VersionState): boolean => !LIVE.includes(state);
 
+/** For lists that filter by a chosen state; deciding goes by `decide`. */
+export const isIn = (state: VersionState, chosen: VersionState): boolean => state === chosen;
+
 /** Overdue is a fact, not a state: a running order never lapses by itself. */
 export const isOverdue = (state: VersionState, lapsesAt: number | null, now: number): boolean =>
   (state === 'running' || state === 'held') && lapsesAt !== null && now > lapsesAt;
