@@ -1,6 +1,7 @@
 import { drizzle, type PostgresJsDatabase } from 'drizzle-orm/postgres-js';
-import postgres, { type Sql } from 'postgres';
+import type { Sql } from 'postgres';
 import { systemClock, type Clock } from '../clock';
+import { openDriver } from './driver';
 
 /** One pool, its clock and its two faces: drizzle for queries, `sql` for named statements and LISTEN. */
 export type Database = {
@@ -20,7 +21,7 @@ type Options = {
 
 /** Opens a pool in UTC with time limits; connects on first use. */
 export function openDatabase(url: string, options: Options = {}): Database {
-  const sql = postgres(url, {
+  const sql = openDriver(url, {
     max: options.max ?? 10,
     connect_timeout: 5,
     onnotice: () => undefined,

@@ -1,3 +1,4 @@
+import { DrizzleQueryError } from 'drizzle-orm';
 import postgres from 'postgres';
 
 /** The database could not be reached or gave up: nothing was recorded, the same request may be sent again. */
@@ -8,6 +9,7 @@ export class DatabaseUnavailable extends Error {
   }
 }
 
+/** The connection is gone. */
 const LOST = new Set([
   'CONNECTION_CLOSED',
   'CONNECTION_ENDED',
@@ -15,15 +17,19 @@ const LOST = new Set([
   'CONNECT_TIMEOUT',
   'ECONNREFUSED',
   'ECONNRESET',
-  'ENOENT',
   'EPIPE',
+  'ERR_STREAM_DESTROYED',
   'ETIMEDOUT',
-  '53300', // too many connections
   '57P01', // the database is being shut down
   '57P02',
-  '57P03',
-  '57014', // the time limit of a statement
-  '25P03', // the time limit of an idle transaction
+  '57P03', // it is starting
+  '25P03', // idle for too long inside a transaction
+]);
+
+/** The connection stands, the transaction does not. */
+const GAVE_UP = new Set([
+  '53300', // too many connections
+  '57014', // a statement took too long
   '40001',
   '40P01', // deadlock
   '55P03', // lock not available
@@ -37,11 +43,19 @@ const codeOf = (error: unknown): string => {
   return '';
 };
 
-/** Whether the transaction may simply be tried again: the connection went or the server gave up on it. */
-export const isUnavailable = (error: unknown): boolean => {
+/** Whether the connection itself is gone. */
+export const isLost = (error: unknown): boolean => {
   const code = codeOf(error);
   return LOST.has(code) || code.startsWith('08');
 };
+
+/** Whether the transaction may simply be tried again: the connection went or the server gave up on it. */
+export const isUnavailable = (error: unknown): boolean => isLost(error) || GAVE_UP.has(codeOf(error));
+
+/** The driver's own error: drizzle's wrapper prints the bound values, which belong into no log. */
+export function withoutValues(error: unknown): unknown {
+  return error instanceof DrizzleQueryError && error.cause ? error.cause : error;
+}
 
 export type ConstraintCode = 'conflict' | 'last-resort-limit';
 

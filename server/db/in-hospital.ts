@@ -5,7 +5,7 @@ import { appendEntries } from '../ledger/append';
 import type { LedgerEntry, LedgerNote } from '../ledger/entries';
 import { claimKey, keepAnswer, type AnswerKey } from './answers';
 import type { Database } from './client';
-import { constraintRefusal, DatabaseUnavailable, isUnavailable } from './faults';
+import { constraintRefusal, DatabaseUnavailable, isUnavailable, withoutValues } from './faults';
 import { refused, type Answer, type Outcome, type Refused } from './outcome';
 import { nearMisses } from './schema/near-misses';
 import { outbox } from './schema/outbox';
@@ -53,7 +53,7 @@ export async function inHospital<T>(
     );
   } catch (error) {
     const broken = constraintRefusal(error);
-    if (!broken) throw isUnavailable(error) ? new DatabaseUnavailable(error) : error;
+    if (!broken) throw thrown(error);
     return await orUnavailable(recordBroken(run, broken));
   }
 }
@@ -68,11 +68,14 @@ export function readInHospital<T>(
   return orUnavailable(inTransaction(database, actor.hospitalId, 'read only', (tx) => query(tx, now)));
 }
 
+const thrown = (error: unknown): unknown =>
+  isUnavailable(error) ? new DatabaseUnavailable(withoutValues(error)) : withoutValues(error);
+
 async function orUnavailable<T>(work: Promise<T>): Promise<T> {
   try {
     return await work;
   } catch (error) {
-    throw isUnavailable(error) ? new DatabaseUnavailable(error) : error;
+    throw thrown(error);
   }
 }
 
@@ -81,10 +84,8 @@ async function act<T>(run: Run, tx: Tx, sql: TransactionSql, command: Command<T>
   const earlier = key && (await claimKey(tx, key, run.now));
   if (earlier) return earlier as Answer<T>;
 
-  // sent without waiting: the connection answers in order
-  const savepoint = sql.unsafe('savepoint command').execute();
+  await sql.unsafe('savepoint command');
   const outcome = await command(tx, run.now);
-  await savepoint;
   if (!outcome.ok) await sql.unsafe('rollback to savepoint command');
   return await settle(run, tx, sql, outcome);
 }
