@@ -1,3 +1,5 @@
+import { formatNumber } from '@shared/rounding';
+
 /** One stroke or filled shape of a glyph, in a 16 × 16 box. */
 export type GlyphShape = {
   d: string;
@@ -13,7 +15,7 @@ export type GlyphShape = {
 };
 
 const circle = (cx: number, cy: number, r: number): string =>
-  `M${cx - r} ${cy}a${r} ${r} 0 1 0 ${2 * r} 0a${r} ${r} 0 1 0 ${-2 * r} 0z`;
+  `M${formatNumber(cx - r, 2)} ${cy}a${r} ${r} 0 1 0 ${2 * r} 0a${r} ${r} 0 1 0 ${-2 * r} 0z`;
 
 const ring = { d: circle(8, 8, 6.4), width: 1.4 };
 const dashed: GlyphShape = { d: circle(8, 8, 5.7), dash: '2.2 1.38', dashOffset: 1.1, butt: true };

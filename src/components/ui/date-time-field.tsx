@@ -23,7 +23,7 @@ export function inWords(value: string, short = false): string {
   return time ? `${date}, ${time}` : date;
 }
 
-/** A local date and time; the browser's own entry and picker come with it. Pass `value` (RHF: watch it). */
+/** A local date and time; the browser's own entry and picker come with it. Pass `value` (RHF: `useWatch`). */
 export function DateTimeField(props: DateTimeFieldProps) {
   const {
     label,

@@ -58,7 +58,7 @@ export function Segmented(props: SegmentedProps) {
                 defaultChecked={value === undefined && defaultValue === option.value ? true : undefined}
                 onChange={choose}
               />
-              {hasConsequences ? <b>{option.label}</b> : option.label}
+              {hasConsequences ? <b>{option.label}</b> : option.label}{' '}
               {option.consequence !== undefined && <span>{option.consequence}</span>}
             </label>
           ))}
