@@ -1,10 +1,10 @@
 import { decimalText } from '@shared/canonical';
-import { ageAt, ageText } from '@shared/children/age';
 import type { ChildHead, WeightRow } from '@shared/routes/children';
 import { toRfc3339, type Instant } from '@shared/time';
 import { staleText } from '@shared/weights/dosing';
 import { and, desc, eq, isNull } from 'drizzle-orm';
 import { alias } from 'drizzle-orm/pg-core';
+import { presentChild } from '../children/present';
 import { accounts } from '../db/schema/accounts';
 import { children, stays } from '../db/schema/children';
 import { wards } from '../db/schema/hospitals';
@@ -25,25 +25,7 @@ export async function loadChildHead(
     .leftJoin(wards, eq(wards.id, stays.wardId))
     .where(eq(children.id, childId));
   if (row === undefined) return null;
-  const { child, bed, wardId, wardName } = row;
-  const bornAt = child.bornAt ?? undefined;
-  return {
-    id: child.id,
-    number: child.number,
-    surname: child.surname,
-    given: child.given,
-    bornOn: child.bornOn,
-    bornAt: child.bornAt === null ? null : toRfc3339(child.bornAt),
-    ageText: ageText(ageAt({ bornOn: child.bornOn, bornAt }, now, zone)),
-    sex: child.sex,
-    gestationWeeks: child.gestationWeeks,
-    gestationDays: child.gestationDays,
-    allergies: child.allergies,
-    flags: child.flags,
-    ward: wardId === null || wardName === null ? null : { id: wardId, name: wardName },
-    bed,
-    rev: child.rev,
-  };
+  return presentChild(row.child, row, now, zone);
 }
 
 /** A weight that looked wrong may be used once what it needed has been done. */

@@ -29,6 +29,10 @@ export type DraftWork =
     }
   | WorkedOutDraft;
 
+export const isWorkedOut = (work: DraftWork): work is WorkedOutDraft => work.state === 'worked-out';
+export const isIncomplete = (work: DraftWork): work is Extract<DraftWork, { state: 'incomplete' }> =>
+  work.state === 'incomplete';
+
 /** A draft as typed, worked out against its chart: the same function in the browser and on the server. */
 export function workOutDraft(form: OrderForm, context: DraftContext): DraftWork {
   const reading = readOrderForm(form, context);
