@@ -48,14 +48,14 @@ export function IdentityStrip({ name, hospitalNumber, children, below, ...child 
     </>
   );
   return (
-    <>
+    <section className="child" aria-label="Child">
       <div className="idmini">
         <b>{fullName}</b>
         <span>{hospitalNumber}</span>
       </div>
       <div className="idw">
         <div className="idline">
-          <dl className="id" aria-label="Child">
+          <dl className="id">
             <div className="who0">
               <dt className="vh">Name</dt>
               <dd className="nm">{fullName}</dd>
@@ -102,6 +102,6 @@ export function IdentityStrip({ name, hospitalNumber, children, below, ...child 
         </div>
         {below && <div className="below">{below}</div>}
       </div>
-    </>
+    </section>
   );
 }
