@@ -56,7 +56,7 @@ export default tseslint.config(
       '@typescript-eslint/restrict-template-expressions': ['error', { allowNumber: true }],
     },
   },
-  { files: ['**/*.tsx'], plugins: { 'react-hooks': reactHooks }, rules: { ...reactHooks.configs.recommended.rules, complexity: ['error', 16], ...size(300, 120) } },
+  { files: ['**/*.tsx'], plugins: { 'react-hooks': reactHooks }, rules: { 'react-hooks/rules-of-hooks': 'error', 'react-hooks/exhaustive-deps': 'error', complexity: ['error', 16], ...size(300, 120) } },
   {
     files: ['shared/**/*.ts'],
     rules: {

@@ -29,8 +29,8 @@ export function allergyStatus(text: string): AllergyStatus {
 
 /** A child as a person registers or corrects it; null means not recorded. */
 export const childFields = z.object({
-  number: line('Give the hospital number.', 40).regex(/^[\p{L}\p{N}][\p{L}\p{N}/.-]*$/u, {
-    error: 'A hospital number has letters, digits, points, strokes and hyphens only.',
+  number: line('Give the hospital number.', 40).regex(/^[\p{L}\p{N}]([\p{L}\p{N}/. -]*[\p{L}\p{N}])?$/u, {
+    error: 'A hospital number has letters, digits, spaces, points, strokes and hyphens only.',
     abort: true,
   }),
   surname: line('Give the surname.', 120),
