@@ -1,5 +1,6 @@
-import express, { Router, type Express } from 'express';
+import express, { Router, type Express, type RequestHandler } from 'express';
 import { bindAccounts } from './accounts/routes';
+import { bindChildren } from './children/routes';
 import { bindCspReports } from './http/csp-reports';
 import type { Deps } from './http/deps';
 import { logRequests } from './http/log-requests';
@@ -8,14 +9,29 @@ import { limitAll, limitSignIn, RATES, type Rates } from './http/rate-limit';
 import { sameOrigin } from './http/same-origin';
 import { neverStored, securityHeaders } from './http/security-headers';
 import { serveClient } from './http/static-files';
+import { bindPrints } from './prints/routes';
+import { bindRulebook } from './rulebook/routes';
+import { bindShelf } from './shelf/routes';
+import { bindWards } from './wards/routes';
+import { bindWeights } from './weights/routes';
 
 /** Each noun puts its routes on the router. */
-const NOUNS: readonly ((router: Router) => void)[] = [bindAccounts];
+const NOUNS: readonly ((router: Router) => void)[] = [
+  bindAccounts,
+  bindWards,
+  bindChildren,
+  bindWeights,
+  bindShelf,
+  bindRulebook,
+  bindPrints,
+];
 
 export type AppOptions = {
   rates?: Rates;
   /** The built client's folder; absent in tests of the API. */
   client?: string;
+  /** Pages of the program's own mail fake; only where it runs one. */
+  mailbox?: RequestHandler;
 };
 
 /** The application on its dependencies: no port is opened, no worker started. */
@@ -35,6 +51,7 @@ export function makeApp(deps: Deps, options: AppOptions = {}): Express {
   for (const bindNoun of NOUNS) bindNoun(router);
   router.use('/api', noSuchRoute);
   app.use(router);
+  if (options.mailbox !== undefined) app.use('/mailbox', options.mailbox);
   if (options.client !== undefined) serveClient(app, options.client);
   app.use(problemHandler);
   return app;

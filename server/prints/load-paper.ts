@@ -50,13 +50,13 @@ export async function loadPaper(
   tx: Tx,
   code: string,
   publicUrl: string,
-  wouldBe: (versionId: string) => Promise<OrderContent | null>,
+  wouldBe: () => Promise<OrderContent | null>,
 ): Promise<OrderPaper | null> {
   const print = await findByCode(tx, code);
   const version = print && (await findContent(tx, print.versionId));
   const place = version && (await findPlace(tx, version.childId));
   if (!print || !version || !place) return null;
-  const content = version.content === null ? await wouldBe(print.versionId) : readContent(version.content);
+  const content = version.content === null ? await wouldBe() : readContent(version.content);
   if (content === null) return null;
   const revised = isRevised(version.state);
   const signed = await listSignatures(tx, print.versionId);

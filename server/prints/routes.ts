@@ -12,8 +12,8 @@ import { depsOf } from '../http/deps';
 import { bind } from '../http/handle';
 import { sendProblem } from '../http/problem';
 import { loadFacts } from '../orders/facts';
-import { wouldBeContent } from '../orders/would-be-content';
 import { makePrint } from './commands/make-print';
+import { draftContent } from './draft-content';
 import { loadPaper } from './load-paper';
 import { paperStanding, UNKNOWN_PAPER } from './paper-standing';
 
@@ -64,8 +64,8 @@ async function readPaper(deps: ReturnType<typeof depsOf>, actor: Actor, code: st
     const loaded = await loadFacts(tx, actor, print.versionId, now);
     const isTheirs = loaded?.ward && isOnWard(actor, loaded.ward.id) && maySee(loaded.coverage);
     if (!isTheirs) return refused('not-found');
-    const paper = await loadPaper(tx, code, deps.env.PUBLIC_URL, (versionId) =>
-      wouldBeContent(tx, versionId, now),
+    const paper = await loadPaper(tx, code, deps.env.PUBLIC_URL, () =>
+      draftContent(tx, loaded, actor.hospitalId, now),
     );
     return paper === null ? refused('not-found') : done(paper);
   });

@@ -26,16 +26,14 @@ export async function makePrint(
     return refused('not-found', { detail: 'This order is covered until its check is signed.' });
   const head = await findHead(tx);
   const code = newPaperCode();
-  await tx
-    .insert(prints)
-    .values({
-      code,
-      versionId,
-      by: actor.id,
-      at: now,
-      ledgerSeq: head?.seq ?? 0,
-      watermark: WATERMARKS[loaded.row.state],
-    });
+  await tx.insert(prints).values({
+    code,
+    versionId,
+    by: actor.id,
+    at: now,
+    ledgerSeq: head?.seq ?? 0,
+    watermark: WATERMARKS[loaded.row.state],
+  });
   return done(
     { code, href: `/api/prints/${code}.pdf` },
     {
