@@ -24,6 +24,8 @@ export function openDatabase(url: string, options: Options = {}): Database {
   const sql = openDriver(url, {
     max: options.max ?? 10,
     connect_timeout: 5,
+    // s; the driver's own grows to 20 with every connection that was cut
+    backoff: () => 0.2,
     onnotice: () => undefined,
     connection: {
       application_name: options.applicationName ?? 'brimline',

@@ -8,8 +8,9 @@ import { isLost } from './faults';
  *    read-only details of the statement; the second statement throws there, outside any promise, and ends the
  *    process. `mendRejection` lets all statements define the same details: none. (They hold bound values, which
  *    do not belong into a log anyway.)
- * 2. After a failed transaction the driver always sends ROLLBACK. On a cut connection that never gets an answer,
- *    and the connection's place in the pool is lost for good. `guardBegin` lets such a transaction end without it.
+ * 2. A transaction holds its connection by object, and the pool opens that object again after a cut. What the old
+ *    transaction still sends then runs inside the next one, possibly of another hospital. `guardBegin` refuses
+ *    statements after a cut, and lets such a transaction end without the driver's ROLLBACK or COMMIT.
  */
 export function openDriver(url: string, options: Options<Record<string, never>>): Sql {
   const sql = postgres(url, options);

@@ -5,6 +5,7 @@ export const LEDGER_ACTS = [
   'signed-out',
   'locked',
   'unlocked',
+  'password-refused',
   'session-revoked',
   'child-registered',
   'child-edited',
