@@ -1,5 +1,7 @@
 import express, { Router, type Express, type RequestHandler } from 'express';
 import { bindAccounts } from './accounts/routes';
+import { bindBedside } from './bedside/routes';
+import { bindChecks } from './checks/routes';
 import { bindChildren } from './children/routes';
 import { bindCspReports } from './http/csp-reports';
 import type { Deps } from './http/deps';
@@ -23,6 +25,8 @@ const NOUNS: readonly ((router: Router) => void)[] = [
   bindWeights,
   bindShelf,
   bindRulebook,
+  bindChecks,
+  bindBedside,
   bindPrints,
 ];
 

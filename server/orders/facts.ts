@@ -115,6 +115,9 @@ function yourCheck(check: CheckRow | undefined): VersionFacts['yourCheck'] {
   switch (statusOf(check)) {
     case 'open':
       return 'open';
+    // handed on before lock-in: nothing was fixed, so it may come back
+    case 'passed-on':
+      return 'none';
     case 'locked-agreed':
       return check.choicesDiffer ? 'choices-differ' : 'agreed';
     case 'differed':

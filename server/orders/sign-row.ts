@@ -13,8 +13,11 @@ export type Signing = {
   note?: string;
 };
 
+/** The signer as printed. */
+export type Signer = Pick<Actor, 'id' | 'name' | 'title' | 'registrationNumber'>;
+
 /** Writes a signature: the person as printed at this time, and the hash of exactly what was signed. */
-export async function sign(tx: Tx, actor: Actor, now: Instant, signing: Signing): Promise<void> {
+export async function sign(tx: Tx, actor: Signer, now: Instant, signing: Signing): Promise<void> {
   await tx.insert(signatures).values({
     versionId: signing.versionId,
     meaning: signing.meaning,

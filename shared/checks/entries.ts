@@ -1,6 +1,7 @@
 import { FRACTIONS, MAINTENANCE_METHODS, SEXES, type Kind } from '../calc/types';
 import type { DecimalSpec } from '../decimal-input';
 import type { Urgency } from '../orders/form';
+import { KG_FIELD } from '../weights/limits';
 import { WEIGHT_SOURCES, WORKED_OUT_BY, type CheckForm, type CheckFormField } from './form';
 import {
   AGE_UNIT_WORDS,
@@ -91,7 +92,7 @@ const WEIGHT: CheckEntry = {
   label: 'Dosing weight',
   nature: 'fact',
   note: 'Weigh, or read the scales or the chart yourself.',
-  control: decimal(3, 0.2, 250, 'kg'),
+  control: { type: 'decimal', spec: KG_FIELD },
   group: 'weight',
 };
 const WEIGHT_SOURCE: CheckEntry = {

@@ -33,3 +33,15 @@ export const FRACTION_WORDS: Readonly<Record<Fraction, string>> = {
 
 export const potassiumWords = (mmolPerL: number): string =>
   mmolPerL === 0 ? 'No added potassium' : `Potassium chloride ${mmolPerL} mmol/L`;
+
+/** What a checker returns an order for. */
+export const RETURN_WORDS = {
+  weight: 'Weight',
+  fluid: 'Fluid',
+  additives: 'Additives',
+  fraction: 'Fraction',
+  'rate-or-time': 'Rate or time',
+  child: 'Child',
+  'something-else': 'Something else',
+} as const;
+export type ReturnMatter = keyof typeof RETURN_WORDS;

@@ -57,10 +57,22 @@ export const bedsidePageSchema = z.object({
   witnessNeeded: z.boolean(),
   startBy: at,
   lapsesAt: at,
+  /** Maintenance that is connected to this child now: it is replaced by name, or stopped first. */
+  connected: z.array(
+    z.object({
+      versionId: id,
+      code: z.string(),
+      version: z.int(),
+      state: z.enum(VERSION_STATES),
+      fluid: z.string(),
+      rateMlPerH: decimalText,
+    }),
+  ),
   acts: z.array(verdictSchema),
   now: at,
   zone: z.string(),
 });
+export type BedsidePage = z.infer<typeof bedsidePageSchema>;
 
 export const bedsideRoutes = {
   bedside: get({

@@ -33,6 +33,8 @@ export const checkQueueRowSchema = coveredOrderSchema.extend({
   }),
   wardName: z.string(),
   askedOfYou: z.boolean(),
+  /** A check before the start, or the countersignature of what was given in an emergency. */
+  act: z.enum(['check', 'countersign']),
   waitedMinutes: z.int(),
   isLate: z.boolean(),
   yourState: z.enum(['none', 'open', 'agreed', 'choices-differ', 'differed', 'ended']),
@@ -153,7 +155,10 @@ export const checkRoutes = {
     path: '/api/beside/check',
     access: 'public',
     figures: 'by-coverage',
-    response: checkPageSchema,
+    /** Who checks here and until when: this page knows no session of its own to ask. */
+    response: checkPageSchema.extend({
+      visit: z.object({ checkerName: z.string(), until: at }).optional(),
+    }),
   }),
   besideSave: put({
     path: '/api/beside/draft',
