@@ -10,6 +10,9 @@ import { assertSafeRole } from './db/roles';
 import { parseEnv } from './env';
 import type { Deps } from './http/deps';
 import { makeLog } from './http/make-log';
+import { mailboxRouter } from './mail/mailbox';
+import { startSmtpFake, type SmtpFake } from './mail/smtp-fake';
+import { startMailWorker } from './mail/worker';
 
 type Stop = () => Promise<void>;
 
@@ -19,8 +22,9 @@ function clientFolder(): string | undefined {
   return places.find((place) => existsSync(`${place}/index.html`));
 }
 
-async function listen(deps: Deps): Promise<Stop> {
-  const server = createServer(makeApp(deps, { client: clientFolder() }));
+async function listen(deps: Deps, fake: SmtpFake | undefined): Promise<Stop> {
+  const mailbox = fake && mailboxRouter(fake);
+  const server = createServer(makeApp(deps, { client: clientFolder(), mailbox }));
   await new Promise<void>((ready, failed) => {
     server.once('error', failed);
     server.listen(deps.env.PORT, deps.env.HOST, ready);
@@ -35,6 +39,17 @@ async function listen(deps: Deps): Promise<Stop> {
     });
 }
 
+/** What goes on without requests: mail. */
+async function startWork(deps: Deps, fake: SmtpFake | undefined): Promise<Stop[]> {
+  const smtpUrl = fake?.smtpUrl ?? deps.env.SMTP_URL;
+  if (smtpUrl === undefined) {
+    deps.log.warn('SMTP_URL is not set: mail waits in the outbox');
+    return [];
+  }
+  const worker = await startMailWorker({ ...deps, smtpUrl });
+  return fake === undefined ? [worker] : [worker, fake.stop];
+}
+
 async function main(): Promise<void> {
   const env = parseEnv(process.env);
   const log = makeLog(env.LOG_LEVEL);
@@ -45,8 +60,9 @@ async function main(): Promise<void> {
     throw new Error('The database has an older schema than this program: run the migrations first.');
   }
   const deps: Deps = { db, clock, env, log };
+  const fake = env.BRIMLINE_MAILBOX === undefined ? undefined : await startSmtpFake();
   // stopped in turn: no new requests first, the pool last
-  const stops: Stop[] = [await listen(deps), () => db.close()];
+  const stops: Stop[] = [await listen(deps, fake), ...(await startWork(deps, fake)), () => db.close()];
 
   let isStopping = false;
   const stop = async () => {

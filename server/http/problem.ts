@@ -52,7 +52,7 @@ export const problemHandler: ErrorRequestHandler = (error: unknown, request, res
       detail: 'The database cannot be reached at the moment.',
     });
   }
-  if (error instanceof URIError) {
+  if (error instanceof URIError || isNoSuchFile(error)) {
     return sendProblem(response, 'not-found', { detail: 'There is nothing at this address.' });
   }
   depsOf(request).log.error({ requestId: response.locals.requestId as unknown, err: error }, 'unexpected');
@@ -63,3 +63,7 @@ function bodyFault(error: unknown): string | undefined {
   if (typeof error !== 'object' || error === null || !('type' in error)) return undefined;
   return BODY_FAULTS[String(error.type)];
 }
+
+/** The file server tells by status: a path it has no file for, or will not look at. */
+const isNoSuchFile = (error: unknown): boolean =>
+  error instanceof Error && 'status' in error && [400, 403, 404].includes(Number(error.status));

@@ -1,13 +1,27 @@
+import { DEFAULT_SHELF } from '@shared/shelf/default';
 import type { products } from '../../../server/db/schema/shelf';
 
-type Row = Omit<typeof products.$inferInsert, 'addedAt'>;
-
-/** Product rows of a test hospital: generic fluids, label values of common practice. */
-export const SHELF: readonly Row[] = [
-  row('Sodium chloride 0.9 %', { sodium: 154, chloride: 154, osmolarity: 308 }),
-  row('Sodium chloride 0.9 % + glucose 5 %', { sodium: 154, chloride: 154, glucose: 50, osmolarity: 586 }),
-];
-
-function row(name: string, composition: Omit<Row, 'name' | 'base' | 'bagSizes' | 'kinds'>): Row {
-  return { name, base: name, bagSizes: [500, 1000], kinds: ['maintenance', 'bolus'], ...composition };
-}
+/** Product rows of a hospital that starts with the default shelf. */
+export const SHELF: readonly Omit<typeof products.$inferInsert, 'addedAt'>[] = DEFAULT_SHELF.map(
+  (fluid, position) => ({
+    name: fluid.name,
+    base: fluid.base,
+    addedPotassium: fluid.addedPotassium,
+    sodium: fluid.sodium,
+    potassium: fluid.potassium,
+    chloride: fluid.chloride,
+    calcium: fluid.calcium,
+    magnesium: fluid.magnesium,
+    lactate: fluid.lactate,
+    acetate: fluid.acetate,
+    gluconate: fluid.gluconate,
+    glucose: fluid.glucoseGPerL,
+    osmolarity: fluid.osmolarity,
+    bagSizes: [...fluid.bagSizes],
+    isReadyMixed: fluid.readyMixed,
+    isHighRisk: fluid.highRisk,
+    kinds: [...fluid.permittedKinds],
+    isNewbornOnly: fluid.newbornOnly,
+    position,
+  }),
+);
