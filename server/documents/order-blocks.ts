@@ -51,7 +51,7 @@ export const headBlock = (sheet: Sheet, paper: OrderPaper, y: number): number =>
   sheet.text(content.code, PAGE.right, y - 1, { size: 17, weight: 'bold', align: 'right' });
   sheet.text(`version ${content.version}`, PAGE.right, y + 22, { color: INK.soft, align: 'right' });
   sheet.line(PAGE.left, y + 50, PAGE.right, y + 50, 2);
-  return y + 62;
+  return y + 58;
 };
 
 type Cell = { label: string; value: string; x: number; width: number };
@@ -170,7 +170,7 @@ export const figureBlock = (sheet: Sheet, paper: OrderPaper, y: number): number 
     right += sheet.paragraph(words, SPLIT.rightX, right, SPLIT.rightWidth, { size: 14, lineHeight: 20 });
   const bottom = Math.max(y + 132, right + 8);
   sheet.line(PAGE.left, bottom, PAGE.right, bottom, 1);
-  return bottom + 11;
+  return bottom + 9;
 };
 
 export const heading = (

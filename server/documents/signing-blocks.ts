@@ -51,7 +51,7 @@ export const signedBlock = (sheet: Sheet, paper: OrderPaper, y: number): number 
     row += Math.max(28, height + 10);
     sheet.line(PAGE.left, row, PAGE.right, row, 0.7, INK.rule);
   }
-  return row + 11;
+  return row + 8;
 };
 
 const BEDSIDE = [
