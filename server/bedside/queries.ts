@@ -1,14 +1,9 @@
-import { isConnected, isRevised, type VersionState } from '@shared/orders/states';
-import { toRfc3339 } from '@shared/time';
-import type { Signature } from '@shared/routes/orders';
+import { isConnected, type VersionState } from '@shared/orders/states';
 import { and, eq, isNull } from 'drizzle-orm';
 import { infusions } from '../db/schema/bedside';
 import { orders, orderVersions } from '../db/schema/orders';
 import { products } from '../db/schema/shelf';
 import type { Tx } from '../db/transaction';
-import { isVoid } from '../prints/load-paper';
-import { listSignatures } from '../prints/queries';
-import type { LoadedVersion } from '../orders/facts';
 
 export type Infusion = typeof infusions.$inferSelect;
 
@@ -49,19 +44,4 @@ export async function connectedTo(tx: Tx, childId: string, except: string): Prom
     .where(and(eq(infusions.childId, childId), isNull(infusions.endedAt)))
     .orderBy(infusions.startedAt);
   return rows.filter(({ versionId, state }) => versionId !== except && isConnected(state));
-}
-
-/** The signatures of a version as a page shows them. */
-export async function signaturesOf(tx: Tx, { row }: Pick<LoadedVersion, 'row'>): Promise<Signature[]> {
-  const rows = await listSignatures(tx, row.id);
-  return rows.map((signature) => ({
-    meaning: signature.meaning,
-    name: signature.printedName,
-    role: signature.printedTitle,
-    registrationNumber: signature.printedRegistrationNumber ?? '',
-    at: toRfc3339(signature.at),
-    how: signature.how,
-    note: signature.note ?? '',
-    isVoid: isVoid(signature, row.contentSha256, isRevised(row.state)),
-  }));
 }

@@ -13,7 +13,8 @@ import { loadChildHead } from '../orders/chart-parts';
 import { loadFacts, type LoadedVersion } from '../orders/facts';
 import { NO_SUCH_ORDER } from '../orders/lock-version';
 import { loadBedside } from './load-bedside';
-import { connectedTo, signaturesOf } from './queries';
+import { loadSignatures } from '../orders/present-open';
+import { connectedTo } from './queries';
 
 const ACTS: readonly Act[] = ['start', 'hold', 'resume', 'send-away', 'stop', 'finish'];
 
@@ -41,7 +42,7 @@ export async function readBedsidePage(
     state: row.state,
     child,
     content,
-    signatures: await signaturesOf(tx, version),
+    signatures: await loadSignatures(tx, row),
     volumeToInfuse: { mostMl: decimalText(toDecimals(most.ml, 1), 1), words: most.words },
     products,
     witnessNeeded: witnessNeeded(content, context.rulebook),

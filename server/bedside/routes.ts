@@ -19,7 +19,7 @@ export function bindBedside(router: Router): void {
     readInHospital(deps.db, actor, (tx, now) => readBedsidePage(tx, actor, params.id, now)),
   );
   bind(router, ROUTES.compareStep, ({ deps, actor, params, body, key }) =>
-    inHospital(deps.db, actor, { key, request: { ...params, ...body } }, (tx, now) =>
+    inHospital(deps.db, actor, { key, request: ['compareStep', params, body] }, (tx, now) =>
       compareOne(tx, actor, { versionId: params.id, ...body }, now),
     ),
   );
@@ -30,7 +30,7 @@ export function bindBedside(router: Router): void {
     return await inHospital(
       deps.db,
       actor,
-      { key, request: { ...params, ...rest, witnessLogin } },
+      { key, request: ['recordStart', params, rest, witnessLogin] },
       (tx, now) => recordStart(tx, actor, { versionId: params.id, witnessLogin, ...rest }, now),
     );
   });
@@ -39,32 +39,32 @@ export function bindBedside(router: Router): void {
 
 function bindRunning(router: Router): void {
   bind(router, ROUTES.stop, ({ deps, actor, params, body, key }) =>
-    inHospital(deps.db, actor, { key, request: { ...params, ...body } }, (tx, now) =>
+    inHospital(deps.db, actor, { key, request: ['stop', params, body] }, (tx, now) =>
       stop(tx, actor, { versionId: params.id, ...body }, now),
     ),
   );
   bind(router, ROUTES.stopReason, ({ deps, actor, params, body, key }) =>
-    inHospital(deps.db, actor, { key, request: { ...params, ...body } }, (tx, now) =>
+    inHospital(deps.db, actor, { key, request: ['stopReason', params, body] }, (tx, now) =>
       addStopReason(tx, actor, { versionId: params.id, ...body }, now),
     ),
   );
   bind(router, ROUTES.hold, ({ deps, actor, params, body, key }) =>
-    inHospital(deps.db, actor, { key, request: { ...params, ...body } }, (tx, now) =>
+    inHospital(deps.db, actor, { key, request: ['hold', params, body] }, (tx, now) =>
       hold(tx, actor, { versionId: params.id, ...body }, now),
     ),
   );
   bind(router, ROUTES.resume, ({ deps, actor, params, body, key }) =>
-    inHospital(deps.db, actor, { key, request: { ...params, ...body } }, (tx, now) =>
+    inHospital(deps.db, actor, { key, request: ['resume', params, body] }, (tx, now) =>
       resume(tx, actor, { versionId: params.id, ...body }, now),
     ),
   );
   bind(router, ROUTES.sendAway, ({ deps, actor, params, body, key }) =>
-    inHospital(deps.db, actor, { key, request: { ...params, ...body } }, (tx, now) =>
+    inHospital(deps.db, actor, { key, request: ['sendAway', params, body] }, (tx, now) =>
       sendAway(tx, actor, { versionId: params.id, ...body }, now),
     ),
   );
   bind(router, ROUTES.finish, ({ deps, actor, params, body, key }) =>
-    inHospital(deps.db, actor, { key, request: { ...params, ...body } }, (tx, now) =>
+    inHospital(deps.db, actor, { key, request: ['finish', params, body] }, (tx, now) =>
       finish(tx, actor, { versionId: params.id, ...body }, now),
     ),
   );

@@ -54,7 +54,7 @@ function bindBesideActs(router: Router): void {
     const beside = await readBesideSession(deps, visit.cookieHeader);
     if (beside === null) return ENDED;
     const { actor, versionId } = beside;
-    return await inHospital(deps.db, actor, { key, request: { versionId, ...body } }, (tx, now) =>
+    return await inHospital(deps.db, actor, { key, request: ['besideSave', versionId, body] }, (tx, now) =>
       saveCheck(tx, actor, { versionId, isBeside: true, ...body }, now),
     );
   });
@@ -62,8 +62,11 @@ function bindBesideActs(router: Router): void {
     const beside = await readBesideSession(deps, visit.cookieHeader);
     if (beside === null) return ENDED;
     const { actor, versionId } = beside;
-    const locked = await inHospital(deps.db, actor, { key, request: { versionId, ...body } }, (tx, now) =>
-      lockIn(tx, actor, { versionId, isBeside: true, ...body }, now),
+    const locked = await inHospital(
+      deps.db,
+      actor,
+      { key, request: ['besideLockIn', versionId, body] },
+      (tx, now) => lockIn(tx, actor, { versionId, isBeside: true, ...body }, now),
     );
     return locked.ok ? await pageOf(deps, beside) : locked;
   });
@@ -73,7 +76,7 @@ function bindBesideActs(router: Router): void {
     const { actor, versionId } = beside;
     const verdict = await verifyPasswordAgain(deps, actor, body.password);
     if (verdict !== 'ok') return passwordRefusal(verdict);
-    return await inHospital(deps.db, actor, { key, request: { versionId, ...body } }, (tx, now) =>
+    return await inHospital(deps.db, actor, { key, request: ['besideSign', versionId, body] }, (tx, now) =>
       signCheck(tx, actor, { versionId, ...body }, now),
     );
   });

@@ -30,12 +30,12 @@ export function bindChecks(router: Router): void {
 
 function bindOwnFigures(router: Router): void {
   bind(router, ROUTES.saveCheck, ({ deps, actor, params, body, key }) =>
-    inHospital(deps.db, actor, { key, request: { ...params, ...body } }, (tx, now) =>
+    inHospital(deps.db, actor, { key, request: ['saveCheck', params, body] }, (tx, now) =>
       saveCheck(tx, actor, { versionId: params.id, isBeside: false, ...body }, now),
     ),
   );
   bind(router, ROUTES.lockIn, async ({ deps, actor, params, body, key }) => {
-    const locked = await inHospital(deps.db, actor, { key, request: { ...params, ...body } }, (tx, now) =>
+    const locked = await inHospital(deps.db, actor, { key, request: ['lockIn', params, body] }, (tx, now) =>
       lockIn(tx, actor, { versionId: params.id, isBeside: false, ...body }, now),
     );
     if (!locked.ok) return locked;
@@ -45,14 +45,14 @@ function bindOwnFigures(router: Router): void {
   bind(router, ROUTES.signCheck, async ({ deps, actor, params, body, key }) => {
     const verdict = await verifyPasswordAgain(deps, actor, body.password);
     if (verdict !== 'ok') return passwordRefusal(verdict);
-    return await inHospital(deps.db, actor, { key, request: { ...params, ...body } }, (tx, now) =>
+    return await inHospital(deps.db, actor, { key, request: ['signCheck', params, body] }, (tx, now) =>
       signCheck(tx, actor, { versionId: params.id, ...body }, now),
     );
   });
   bind(router, ROUTES.countersignGiven, async ({ deps, actor, params, body, key }) => {
     const verdict = await verifyPasswordAgain(deps, actor, body.password);
     if (verdict !== 'ok') return passwordRefusal(verdict);
-    return await inHospital(deps.db, actor, { key, request: { ...params, ...body } }, (tx, now) =>
+    return await inHospital(deps.db, actor, { key, request: ['countersignGiven', params, body] }, (tx, now) =>
       countersignGiven(tx, actor, { versionId: params.id, ...body }, now),
     );
   });
@@ -60,17 +60,17 @@ function bindOwnFigures(router: Router): void {
 
 function bindWaysOut(router: Router): void {
   bind(router, ROUTES.cannotVerify, ({ deps, actor, params, body, key }) =>
-    inHospital(deps.db, actor, { key, request: { ...params, ...body } }, (tx, now) =>
+    inHospital(deps.db, actor, { key, request: ['cannotVerify', params, body] }, (tx, now) =>
       cannotVerify(tx, actor, { versionId: params.id, ...body }, now),
     ),
   );
   bind(router, ROUTES.passOn, ({ deps, actor, params, body, key }) =>
-    inHospital(deps.db, actor, { key, request: { ...params, ...body } }, (tx, now) =>
+    inHospital(deps.db, actor, { key, request: ['passOn', params, body] }, (tx, now) =>
       passOn(tx, actor, { versionId: params.id, ...body }, now),
     ),
   );
   bind(router, ROUTES.slip, ({ deps, actor, params, body, key }) =>
-    inHospital(deps.db, actor, { key, request: { ...params, ...body } }, (tx, now) =>
+    inHospital(deps.db, actor, { key, request: ['slip', params, body] }, (tx, now) =>
       slip(tx, actor, { versionId: params.id, ...body }, now),
     ),
   );
