@@ -1,6 +1,7 @@
 import { KINDS } from '@shared/calc/types';
 import { URGENCIES } from '@shared/orders/form';
 import { VERSION_STATES } from '@shared/orders/states';
+import { sql } from 'drizzle-orm';
 import { boolean, integer, pgView, text, uuid } from 'drizzle-orm/pg-core';
 import { instant } from '../columns';
 
@@ -25,4 +26,8 @@ export const coveredVersions = pgView('covered_versions', {
   askedChecker: uuid('asked_checker'),
   signedAt: instant('signed_at'),
   isHighRisk: boolean('is_high_risk').notNull(),
+  live: boolean('live').notNull(),
 }).existing();
+
+/** Where-clause for the partial indexes; a list without it reads every version there ever was. */
+export const coveredIsLive = sql<boolean>`${coveredVersions.live}`;

@@ -100,6 +100,7 @@ describe('covered_versions', () => {
       'hospital_id',
       'is_high_risk',
       'kind',
+      'live',
       'order_id',
       'reason',
       'signed_at',
