@@ -3,7 +3,12 @@ import { workOut } from '@shared/calc/work-out';
 import { buildContent } from '@shared/orders/build-content';
 import { rulebookOf } from '@shared/orders/chart-facts';
 import type { OrderForm } from '@shared/orders/form';
-import { isWorkedOut, workOutDraft, type DraftWork, type WorkedOutDraft } from '@shared/orders/work-out-draft';
+import {
+  isWorkedOut,
+  workOutDraft,
+  type DraftWork,
+  type WorkedOutDraft,
+} from '@shared/orders/work-out-draft';
 import type { DraftContext } from '@shared/routes/orders';
 import type { Instant } from '@shared/time';
 import { millilitres } from '@shared/units';

@@ -131,3 +131,12 @@ export const exceptionNeeded = (limits: readonly LimitFinding[], { row }: Loaded
     data: { limits: listed(limits) },
     nearMisses: limits.map((limit) => limitMiss(row, limit)),
   });
+
+/** Why a draft cannot be put to a senior: brims, reasons owed, or nothing to ask. */
+export function judgeAsking(worked: WorkedOut, held: LoadedVersion): Refused | undefined {
+  const { work } = worked;
+  if (work.brims.length > 0) return overTheBrim(work.brims, held);
+  if (work.reasonsOwed.length > 0) return reasonsOwed(work.reasonsOwed);
+  if (seniorMatters(worked).length > 0) return undefined;
+  return refused('conflict', { detail: 'No limit of this order needs a senior.' });
+}
