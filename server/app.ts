@@ -11,6 +11,8 @@ import { limitAll, limitSignIn, RATES, type Rates } from './http/rate-limit';
 import { sameOrigin } from './http/same-origin';
 import { neverStored, securityHeaders } from './http/security-headers';
 import { serveClient } from './http/static-files';
+import { bindExceptions } from './exceptions/routes';
+import { bindOrders } from './orders/routes';
 import { bindPrints } from './prints/routes';
 import { bindRulebook } from './rulebook/routes';
 import { bindShelf } from './shelf/routes';
@@ -25,6 +27,8 @@ const NOUNS: readonly ((router: Router) => void)[] = [
   bindWeights,
   bindShelf,
   bindRulebook,
+  bindOrders,
+  bindExceptions,
   bindChecks,
   bindBedside,
   bindPrints,
