@@ -1,4 +1,4 @@
-import type { FluidComposition, RunningFluid, WorkOutRequest } from '@shared/calc/types';
+import type { Flag, FluidComposition, RunningFluid, WorkOutRequest } from '@shared/calc/types';
 import { kilograms, millilitresPerHour, milliosmolesPerLitre, mmolPerLitre } from '@shared/units';
 import { describe, expect, it } from 'vitest';
 import {
@@ -112,7 +112,7 @@ describe('potassium', () => {
     ]);
   });
 
-  it.each([
+  it.each<[WorkOutRequest['line'], number, number, string, string]>([
     ['peripheral', 10, 41.7, 'met', '0.167 mmol/kg/h'],
     ['peripheral', 10, 50, 'met', '0.2 mmol/kg/h may be met: 10 kg, 2 mmol/h'],
     ['peripheral', 10, 50.1, 'brim', 'above 0.2 mmol/kg/h'],
@@ -123,7 +123,7 @@ describe('potassium', () => {
     ['peripheral', 70, 251, 'brim', 'above 10 mmol/h'],
     ['central', 70, 500, 'senior', '20 mmol/h, from memory'],
     ['central', 70, 501, 'brim', 'above 20 mmol/h'],
-  ] as const)('40 mmol/L by a %s line, %s kg at %s mL/h: %s (%s)', (line, kg, rate, expected) => {
+  ])('40 mmol/L by a %s line, %s kg at %s mL/h: %s (%s)', (line, kg, rate, expected) => {
     expect(strengthOf(withFluid(USUAL_40, { line, kg }, typed(rate)), 'potassium-rate')).toBe(expected);
   });
 
@@ -214,12 +214,12 @@ describe('glucose rate to 2 years (Koletzko)', () => {
     ]);
   });
 
-  it.each([
+  it.each<[string, Flag[], string, string, string, string]>([
     ['2025-06-11', [], SALINE, 'caution', 'none', 'the day before the first birthday'],
     ['2025-06-10', [], SALINE, 'none', 'none', ''],
-    ['2020-01-01', ['metabolic' as const], SALINE, 'caution', 'none', 'metabolic flag'],
-    ['2020-01-01', ['ketogenic-diet' as const], USUAL, 'none', 'senior', 'ketogenic diet'],
-    ['2020-01-01', ['ketogenic-diet' as const], SALINE, 'none', 'none', ''],
+    ['2020-01-01', ['metabolic'], SALINE, 'caution', 'none', 'metabolic flag'],
+    ['2020-01-01', ['ketogenic-diet'], USUAL, 'none', 'senior', 'ketogenic diet'],
+    ['2020-01-01', ['ketogenic-diet'], SALINE, 'none', 'none', ''],
   ])('born %s, %s, %s: none %s, ketogenic %s (%s; common practice)', (bornOn, list, name, none, keto) => {
     const asked = withFluid(name, { kg: 10, child: { bornOn, flags: list } });
     expect(strengthOf(asked, 'glucose-none')).toBe(none);

@@ -52,7 +52,7 @@ export const bolus = (change: Partial<BolusOrder> = {}): BolusOrder => ({
 
 const CHILD: ChildFacts = { bornOn: '2022-03-14', sex: 'female', gestationWeeks: 40, flags: [] };
 
-type Change = Partial<Omit<WorkOutRequest, 'child' | 'weight'>> & {
+type Change = Partial<Omit<WorkOutRequest, 'child'>> & {
   child?: Partial<ChildFacts>;
   kg?: number;
 };

@@ -13,7 +13,7 @@ describe('who is in scope', () => {
     expect(refusal(request({ child: { bornOn }, order: bolus() }))).toBe(expected);
   });
 
-  it.each([
+  it.each<[number | undefined, number | undefined, string, string, string]>([
     [36, 6, '2026-05-20', 'preterm', 'born at 36+6, now 39+6'],
     [36, 6, '2026-05-19', 'worked out', 'born at 36+6, now 40+0'],
     [37, 0, '2026-06-08', 'worked out', 'born at term'],

@@ -10,7 +10,7 @@ export function readTable(name: string): Row[] {
   return lines.map((line) => {
     const cells = line.split(',');
     const source = cells.slice(columns.length - 1).join(',');
-    const row = Object.fromEntries(columns.map((column, i) => [column, cells[i] ?? ''])) as Row;
+    const row = Object.fromEntries<string>(columns.map((column, i) => [column, cells[i] ?? '']));
     if (!source) throw new Error(`a row of ${name} has no source: ${line}`);
     return { ...row, source };
   });

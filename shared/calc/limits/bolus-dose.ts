@@ -78,7 +78,7 @@ export const bolusTotalLimit: BolusLimit = ({ scene, order, totalPerKg }, found)
   const extra = {
     ...more,
     limit: totalAdvice,
-    ...(isNamed ? {} : { owes: 'advisedBy' as const, reasonOwed: true }),
+    ...(isNamed ? {} : { owes: 'advisedBy' as const }),
   };
   const make = isNamed ? kept : broken;
   found.push(

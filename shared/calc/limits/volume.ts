@@ -1,5 +1,4 @@
 import { above, formatNumber, highestRate } from '../../rounding';
-import { ceilingLabel } from '../ceiling';
 import type { MaintenanceFacts, MaintenanceLimit } from '../facts';
 import { broken, kept } from '../findings';
 
@@ -12,7 +11,7 @@ export const ceilingLimit: MaintenanceLimit = (facts, found) => {
   const more = { value: totalMl, limit: ceiling, unit: 'mL/24 h' };
   if (!above(totalMl, ceiling)) {
     const text = `${asked} of ${most} mL. The brim is ${most} mL in 24 h.`;
-    found.push(kept('maintenance-ceiling', 'brim', [ceilingLabel(scene), text], source, more));
+    found.push(kept('maintenance-ceiling', 'brim', ['Volume in 24 h', text], source, more));
     return;
   }
   const over = formatNumber(totalMl - ceiling, 1);
