@@ -101,7 +101,7 @@ describe('all boluses of 24 h', () => {
   it('owes the name of who advised, and holds once it is there', () => {
     expect(finding(after(1200), 'bolus-advice')).toMatchObject({
       owes: 'advisedBy',
-      reasonOwed: true,
+      deferred: true,
       met: false,
     });
     expect(strengthOf(after(1200, { advisedBy: 'Dr Amadi-Price' }), 'bolus-advice')).toBe('met');
