@@ -67,8 +67,9 @@ export const gestationText = (days: number): string => `${Math.floor(days / 7)}+
 
 /** Born before 37+0 weeks and not yet 40+0 weeks after the last period. The careful reading of "term-corrected", ours. */
 export function isPretermNow(child: Birth & Gestation, at: Instant, zone: string): boolean {
+  if (child.gestationWeeks === undefined || child.gestationWeeks >= TERM_WEEKS) return false;
   const reached = postMenstrualDays(child, at, zone);
-  return reached !== undefined && child.gestationWeeks! < TERM_WEEKS && reached < DUE_WEEKS * 7;
+  return reached !== undefined && reached < DUE_WEEKS * 7;
 }
 
 export type ScopeLimits = {
