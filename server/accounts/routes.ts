@@ -24,7 +24,8 @@ export function bindAccounts(router: Router): void {
     const verdict = can(actor, 'read-ward', params.id);
     if (!verdict.allowed) return refused(verdict.code, { detail: verdict.words });
     const people = await readInHospital(deps.db, actor, (tx) => colleaguesOf(tx, params.id));
-    return done({ people });
+    // another hospital's ward has nobody in it either
+    return people.length === 0 ? refused('not-found') : done({ people });
   });
 }
 

@@ -88,6 +88,8 @@ export const refuse = (code: RefusalCode): Verdict => ({ allowed: false, code, w
 export function decide(act: Act, actor: Actor, facts: VersionFacts, now: number): Verdict {
   const { from, roles, notBy, guards, entitlement } = TRANSITIONS[act];
   if (!hasRole(actor, roles)) return refuse('role-missing');
+  // who is a stranger to the ward learns nothing of the order, not even that it has moved on
+  if (guards.includes('on-ward') && !isOnWard(actor, facts.wardId)) return refuse('on-ward');
   if (!from.includes(facts.state)) return refuse('order-state');
   if (notBy.some((relation) => isYou(facts, relation))) return refuse('second-person-required');
   if (entitlement && !isEntitled(actor, entitlement, facts.wardId)) return refuse('entitlement-missing');

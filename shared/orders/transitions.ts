@@ -152,7 +152,7 @@ export const TRANSITIONS: Readonly<Record<Act, Transition>> = {
   }),
   slip: row(['disputed'], ['awaiting-check'], CHECKERS, {
     notBy: ['author'],
-    guards: ['own-check', 'not-slipped-before'],
+    guards: ['on-ward', 'own-check', 'not-slipped-before'],
   }),
   settle: row(['disputed'], ['returned'], ['prescriber', 'pharmacist', 'lead'], {
     notBy: ['author', 'checker'],
@@ -165,7 +165,7 @@ export const TRANSITIONS: Readonly<Record<Act, Transition>> = {
     ['withdrawn'],
     ['prescriber', 'lead'],
     {
-      guards: ['author-or-lead'],
+      guards: ['on-ward', 'author-or-lead'],
     },
   ),
   revise: row(['disputed', 'returned', 'signed'], ['revised'], ['prescriber'], {
