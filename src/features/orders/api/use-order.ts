@@ -2,11 +2,14 @@ import { queryOptions, useQuery } from '@tanstack/react-query';
 import { call } from '@/lib/api';
 import { POLL_MS, queryClient } from '@/lib/query-client';
 
-/** An order page, read again while it is in view; reading by the page itself is no sign of life of the person. */
+/** An order page, read again while it is in view; those readings are no sign of life of the person. */
 export const orderQuery = (versionId: string) =>
   queryOptions({
     queryKey: ['order', versionId],
-    queryFn: ({ signal }) => call('order', { params: { id: versionId }, background: true, signal }),
+    queryFn: ({ signal, client, queryKey }) => {
+      const isPoll = (client.getQueryState(queryKey)?.dataUpdateCount ?? 0) > 0;
+      return call('order', { params: { id: versionId }, background: isPoll, signal });
+    },
     refetchInterval: POLL_MS,
   });
 

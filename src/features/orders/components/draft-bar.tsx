@@ -6,6 +6,7 @@ import type { DraftWork } from '@shared/orders/work-out-draft';
 import { formatTime, parseInstant } from '@shared/time';
 import type { SaveStatus } from '../api/draft-saver';
 import { offeredEntries, type Offer } from '../forms/apply-offer';
+import { inSentence } from '../forms/order-words';
 
 export type BarActs = {
   onDiscard: () => void;
@@ -42,9 +43,15 @@ const missingWords = (work: DraftWork): string | undefined => {
   }
   if ('detail' in work) return 'This cannot be worked out.';
   return work.reasonsOwed.length > 0
-    ? `A reason is owed: ${work.reasonsOwed[0]?.title.toLowerCase()}.`
+    ? `A reason is owed: ${inSentence(work.reasonsOwed[0]?.title ?? '')}.`
     : undefined;
 };
+
+/** The first sentence, and what follows it. */
+function splitSentence(text: string): [first: string, rest: string] {
+  const end = text.search(/[.:] [A-Z]/);
+  return end < 0 ? [text, ''] : [`${text.slice(0, end)}.`, text.slice(end + 2)];
+}
 
 function OverBar({
   brims,
@@ -52,7 +59,7 @@ function OverBar({
   onOffer,
   isPanelOpen,
 }: Pick<DraftBarProps, 'onKeep' | 'onOffer' | 'isPanelOpen'> & { brims: readonly LimitFinding[] }) {
-  const [brim] = brims;
+  const [what, rest] = splitSentence(brims[0]?.text ?? '');
   const offers = brims.flatMap(({ offer }) => (offer && offeredEntries(offer) ? [offer] : []));
   const [offer] = offers;
   return (
@@ -60,8 +67,8 @@ function OverBar({
       kind="over"
       say={
         <>
-          <b>This order cannot be signed: {brim?.title.toLowerCase()}.</b>
-          {brim?.text} Put it right and the sign button comes back.
+          <b>This order cannot be signed: {what}</b>
+          {rest} Put it right and the sign button comes back.
         </>
       }
     >
@@ -114,7 +121,7 @@ export function DraftBar(props: DraftBarProps) {
   const says =
     seniors.length > 0 ? (
       <>
-        <b>A senior has to agree before you sign:</b> {seniors[0]?.title.toLowerCase()}.
+        <b>A senior has to agree before you sign:</b> {inSentence(seniors[0]?.title ?? '')}.
       </>
     ) : (
       <>

@@ -1,7 +1,6 @@
 import { useMemo } from 'react';
 import { Button } from '@/components/ui/button';
-import { CautionList } from '@/components/workings/caution-list';
-import type { LimitFinding } from '@shared/calc/types';
+import { CautionList, type CautionEntry } from '@/components/workings/caution-list';
 import { workOutDraft, type WorkedOutDraft } from '@shared/orders/work-out-draft';
 import type { Exception } from '../api/use-draft';
 import { offeredEntries, withOffer, type Offer } from '../forms/apply-offer';
@@ -15,22 +14,30 @@ import { GivesSection, TwoGivesSection, WorkingsSection } from './result-section
 
 const SHOWN_GIVES = 6;
 
-function WaysOut({ brims, onOffer }: { brims: readonly LimitFinding[]; onOffer: (offer: Offer) => void }) {
+/** What is allowed instead, as buttons; the first brim's own words stand above the workings already. */
+function waysOut({ brims, information }: WorkedOutDraft, onOffer: (offer: Offer) => void): CautionEntry[] {
+  const ways = brims.map(({ title, text, offer }, index) => ({
+    strength: offer ? ('offer' as const) : ('brim' as const),
+    title: offer ? 'Within the brim:' : `${title}.`,
+    text: index === 0 && offer ? undefined : text,
+    action: offer && offeredEntries(offer) && (
+      <Button small className="mt-s1 flex" onClick={() => onOffer(offer)}>
+        {offer.label}
+      </Button>
+    ),
+  }));
+  const told = information.filter(({ strength }) => strength === 'information');
+  return [
+    ...ways,
+    ...told.map(({ title, text }) => ({ strength: 'information' as const, title: `${title}.`, text })),
+  ];
+}
+
+function WaysOut({ work, onOffer }: { work: WorkedOutDraft; onOffer: (offer: Offer) => void }) {
   return (
     <section className="sec">
       <h2>What you can do</h2>
-      <CautionList
-        entries={brims.map(({ title, text, offer }) => ({
-          strength: offer ? ('offer' as const) : ('brim' as const),
-          title: `${title}.`,
-          text,
-          action: offer && offeredEntries(offer) && (
-            <Button small className="mt-s1 block" onClick={() => onOffer(offer)}>
-              {offer.label}
-            </Button>
-          ),
-        }))}
-      />
+      <CautionList entries={waysOut(work, onOffer)} />
     </section>
   );
 }
@@ -56,7 +63,7 @@ function OverBrim({ work, onOffer }: { work: WorkedOutDraft; onOffer: (offer: Of
         ) : (
           <GivesSection gives={shown.gives.slice(0, SHOWN_GIVES)} />
         )}
-        <WaysOut brims={work.brims} onOffer={onOffer} />
+        <WaysOut work={work} onOffer={onOffer} />
       </div>
     </>
   );

@@ -71,7 +71,7 @@ function TypedRate() {
   const workedOut = figures?.kind === 'maintenance' ? formatNumber(figures.workedOutRate, 1) : undefined;
   if (values.typedRate === '' && !isAskedFor) {
     return (
-      <Button kind="quiet" small className="-ml-2" onClick={() => setAskedFor(true)}>
+      <Button kind="quiet" small className="-ml-[13px] mid:min-h-[24px]" onClick={() => setAskedFor(true)}>
         Set another rate
       </Button>
     );
@@ -103,12 +103,13 @@ function TypedRate() {
 export function MethodGroup() {
   const { values, register, errorOf, owes } = useDraftForm();
   const share = FRACTIONS.find((each) => each === values.fraction);
+  const isOwnFigure = values.method === 'newborn' || values.typedRate !== '' || share === undefined;
   return (
     <Group head="Method">
       <Row>
         <SelectField
           label={FIELD_WORDS.method}
-          width="m basis-[178px]"
+          width="m basis-[196px]"
           id={fieldId('method')}
           placeholder="Choose"
           options={METHOD_OPTIONS}
@@ -122,9 +123,7 @@ export function MethodGroup() {
         <Owed>
           <TextareaField
             label={
-              values.method === 'newborn'
-                ? 'Why this volume'
-                : `Why ${share ? FRACTION_LABELS[share] : 'this fraction'} for this child`
+              isOwnFigure ? 'Why this much for this child' : `Why ${FRACTION_LABELS[share]} for this child`
             }
             id={fieldId('fractionReason')}
             rows={1}

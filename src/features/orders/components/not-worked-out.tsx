@@ -22,7 +22,7 @@ function Jumps({
     <ul>
       {fields.map((field) => (
         <li key={field}>
-          <Button kind="quiet" small className="-ml-2" onClick={() => onJump(field)}>
+          <Button kind="quiet" small className="-ml-[13px]" onClick={() => onJump(field)}>
             {FIELD_WORDS[field]}
           </Button>
         </li>
@@ -55,7 +55,7 @@ export function IncompleteBlock({ work }: { work: Incomplete }) {
           <ul>
             {wrong.map((field) => (
               <li key={field} className="border-b border-rule py-[3px]">
-                <Button kind="quiet" small className="-ml-2" onClick={() => focusField(field)}>
+                <Button kind="quiet" small className="-ml-[13px]" onClick={() => focusField(field)}>
                   {FIELD_WORDS[field]}
                 </Button>
                 <span className="text-small">{work.fields[field]}</span>

@@ -2,6 +2,7 @@ import { Group, Owed } from '@/components/ui/group';
 import { TextareaField } from '@/components/ui/textarea-field';
 import { reasonFor } from '@shared/orders/sort-limits';
 import { useDraftForm } from '../forms/draft-form';
+import { inSentence } from '../forms/order-words';
 
 /** Reasons that limits ask for and no entry of the form holds; one that was typed stays in view. */
 export function ReasonsGroup({ isAsked }: { isAsked: boolean }) {
@@ -18,7 +19,7 @@ export function ReasonsGroup({ isAsked }: { isAsked: boolean }) {
       {asking.map(({ code, title }) => (
         <Owed key={code}>
           <TextareaField
-            label={`Why: ${title.toLowerCase()}`}
+            label={`Why: ${inSentence(title)}`}
             id={`order-reason-${code}`}
             rows={1}
             error={isAsked && owed.has(code) ? 'Say why, in a few words.' : undefined}

@@ -1,6 +1,6 @@
 import { Group } from '@/components/ui/group';
 import { NumberField } from '@/components/ui/number-field';
-import { TextField } from '@/components/ui/text-field';
+import { TextareaField } from '@/components/ui/textarea-field';
 import { useDraftForm } from '../forms/draft-form';
 import { FIELD_WORDS, fieldId } from '../forms/order-words';
 
@@ -31,7 +31,8 @@ export function TakeAwayGroup() {
             {...register(amount)}
           />
           <div className="col-span-2 mid:col-span-1">
-            <TextField
+            <TextareaField
+              rows={1}
               label={FIELD_WORDS[note]}
               labelHidden
               placeholder={example}

@@ -9,7 +9,7 @@ import { formatRelativeDay, instant, parseInstant } from '@shared/time';
 import { useDraftForm } from '../forms/draft-form';
 import { FIELD_WORDS, fieldId, urgencyOptions } from '../forms/order-words';
 
-/** "lapses 11 Jun, 12:00", once the order can be worked out. */
+/** "Lapses 11 Jun, 12:00", once the order can be worked out. */
 function useLapses(): string | undefined {
   const { work, context } = useDraftForm();
   if (!('workOut' in work)) return undefined;
@@ -18,7 +18,7 @@ function useLapses(): string | undefined {
   const now = parseInstant(context.now) ?? instant(0);
   const at = request.order.kind === 'bolus' ? windows.startBy : windows.lapsesAt;
   const says = request.order.kind === 'bolus' ? 'Start it by' : 'Lapses';
-  return `${says} ${formatRelativeDay(at, now, context.zone)}.`;
+  return `${says} ${formatRelativeDay(at, now, context.zone)}`;
 }
 
 /** How urgent the check is; an emergency bolus waits for no senior. */
@@ -38,14 +38,12 @@ export function UrgencyStrip({ labelled = false }: { labelled?: boolean }) {
 
 function Moment({ field, width }: { field: 'plannedStart' | 'reviewBy' | 'bloodsBy'; width?: string }) {
   const { register, errorOf } = useDraftForm();
-  const hint = useLapses();
   return (
     <DateTimeField
       label={FIELD_WORDS[field]}
       width={width}
       id={fieldId(field)}
       error={errorOf(field)}
-      hint={field === 'plannedStart' ? hint : undefined}
       {...register(field)}
     />
   );
@@ -54,11 +52,12 @@ function Moment({ field, width }: { field: 'plannedStart' | 'reviewBy' | 'bloods
 /** When it starts, how long it holds, and when someone looks again. */
 export function TimesGroup() {
   const { values, context, work, register, errorOf, isOver } = useDraftForm();
+  const lapses = useLapses();
   const rulebook = rulebookOf(context);
   if (values.kind === 'bolus') {
     const { startHoursBolus } = ruleValues(rulebook, 'windows');
     return (
-      <Group head="Valid for" note={`${startHoursBolus} h to start`}>
+      <Group head="Valid for" note={lapses ?? `${startHoursBolus} h to start`}>
         <Row>
           <Moment field="plannedStart" width="full" />
           <UrgencyStrip />
@@ -70,7 +69,7 @@ export function TimesGroup() {
   // usually said at signing; here when what stands does not fit this kind
   const isUrgencyWrong = 'fields' in work && work.fields.urgency !== undefined;
   return (
-    <Group head="Valid for" note={`${hoursMost} h at most`}>
+    <Group head="Valid for" note={lapses ?? `${hoursMost} h at most`}>
       <Row>
         <Moment field="plannedStart" width="w2 full" />
         <NumberField

@@ -45,6 +45,10 @@ export const FIELD_WORDS: Readonly<Record<OrderFormField, string>> = {
   checkerId: 'Who checks',
 };
 
+/** A title within a sentence: "Old weight" becomes "old weight", "ADH risk" stays. */
+export const inSentence = (title: string): string =>
+  /^[A-Z][a-z ]/.test(title) ? title.charAt(0).toLowerCase() + title.slice(1) : title;
+
 /** The element of a field, for labels, jumps and focus. */
 export const fieldId = (field: OrderFormField): string => `order-${field}`;
 
@@ -87,7 +91,13 @@ export const FRACTION_LABELS: Readonly<Record<Fraction, string>> = {
 const options = <Value extends string>(values: readonly Value[], words: Readonly<Record<Value, string>>) =>
   values.map((value) => ({ value, label: words[value] }));
 
-export const METHOD_OPTIONS = options(MAINTENANCE_METHODS, METHOD_WORDS);
+/** Short enough to be read whole in the closed field. */
+export const METHOD_OPTIONS = options(MAINTENANCE_METHODS, {
+  'bands-daily': 'Bands, per day',
+  'bands-hourly': 'Bands, 4-2-1 per hour',
+  who: 'WHO',
+  newborn: 'Newborn, by hours',
+});
 export const LINE_OPTIONS = options(LINE_CLASSES, LINE_WORDS);
 export const ROUTE_OPTIONS = options(BOLUS_ROUTES, ROUTE_WORDS);
 export const urgencyOptions = (kind: string) =>
