@@ -186,6 +186,8 @@ GRANT INSERT ON orders, intakes, fluid_plans, results, weights, heights, ruleboo
 --> statement-breakpoint
 GRANT UPDATE (superseded_by) ON intakes, results, heights TO brimline_app;
 --> statement-breakpoint
+GRANT UPDATE (at) ON seen_figures TO brimline_app;
+--> statement-breakpoint
 GRANT UPDATE (ended_at, ended_by) ON fluid_plans TO brimline_app;
 --> statement-breakpoint
 GRANT UPDATE (second_kg, second_method, second_at, second_by, confirmed_by, confirmed_at, superseded_by, superseded_reason)

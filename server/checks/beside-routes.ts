@@ -35,7 +35,11 @@ export function bindBeside(router: Router): void {
   });
   bind(router, ROUTES.besidePage, async ({ deps, visit }) => {
     const beside = await readBesideSession(deps, visit.cookieHeader);
-    return beside === null ? ENDED : await pageOf(deps, beside);
+    if (beside === null) return ENDED;
+    const page = await pageOf(deps, beside);
+    if (!page.ok) return page;
+    const who = { checkerName: beside.actor.name, until: toRfc3339(beside.until) };
+    return done({ ...page.value, visit: who });
   });
   bindBesideActs(router);
   bind(router, ROUTES.closeBeside, async ({ deps, visit, setCookie, key }) => {

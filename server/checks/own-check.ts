@@ -17,10 +17,16 @@ export async function writeCheck(
   values: CheckValues,
   now: Instant,
 ): Promise<void> {
+  // not an upsert: a row to insert is held against the constraints before its conflict is found
+  const changed = await tx
+    .update(checks)
+    .set(values)
+    .where(and(eq(checks.versionId, row.id), eq(checks.checkerId, checkerId)))
+    .returning({ id: checks.id });
+  if (changed.length > 0) return;
   await tx
     .insert(checks)
-    .values({ versionId: row.id, authorId: row.authorId, checkerId, openedAt: now, ...values })
-    .onConflictDoUpdate({ target: [checks.hospitalId, checks.versionId, checks.checkerId], set: values });
+    .values({ versionId: row.id, authorId: row.authorId, checkerId, openedAt: now, ...values });
 }
 
 /** Agreed figures of others whose reservation has run out give the check free. */
