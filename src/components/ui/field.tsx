@@ -11,6 +11,8 @@ export type FieldNotes = {
   hint?: ReactNode;
   /** What is wrong and what would be right. */
   error?: ReactNode;
+  /** Where the page says the error elsewhere, once for several fields: the id of that text. */
+  errorId?: string;
   /** The error is a ceiling, not a malformed entry. */
   overBrim?: boolean;
   caution?: ReactNode;
@@ -47,14 +49,14 @@ function Message({ id, glyph, alert = false, tone = '', children }: MessageProps
   );
 }
 
-type MessagesProps = Pick<FieldNotes, 'error' | 'overBrim' | 'caution' | 'hint'> & {
+type MessagesProps = Pick<FieldNotes, 'error' | 'errorId' | 'overBrim' | 'caution' | 'hint'> & {
   at: (part: string) => string;
 };
 
-function Messages({ at, error, overBrim, caution, hint }: MessagesProps) {
+function Messages({ at, error, errorId, overBrim, caution, hint }: MessagesProps) {
   return (
     <>
-      {error && (
+      {error && !errorId && (
         <Message id={at('error')} glyph={overBrim ? 'brim' : 'refused'} alert>
           {error}
         </Message>
@@ -77,9 +79,11 @@ function Messages({ at, error, overBrim, caution, hint }: MessagesProps) {
 export function Field({ id, caption = false, children, width = '', ...notes }: FieldProps) {
   const ownId = useId();
   const fieldId = id ?? ownId;
-  const { label, labelHidden = false, hint, error, overBrim, caution } = notes;
+  const { label, labelHidden = false, hint, error, errorId, overBrim, caution } = notes;
   const at = (part: string) => `${fieldId}-${part}`;
-  const described = [error && at('error'), caution && at('caution'), hint && at('hint')].filter(Boolean);
+  const described = [error && (errorId ?? at('error')), caution && at('caution'), hint && at('hint')].filter(
+    Boolean,
+  );
   const wiring: FieldWiring = {
     id: fieldId,
     'aria-describedby': described.length > 0 ? described.join(' ') : undefined,
@@ -96,7 +100,7 @@ export function Field({ id, caption = false, children, width = '', ...notes }: F
         </label>
       )}
       {children(wiring, at('label'))}
-      <Messages at={at} {...{ error, overBrim, caution, hint }} />
+      <Messages at={at} {...{ error, errorId, overBrim, caution, hint }} />
     </div>
   );
 }

@@ -21,6 +21,7 @@ export function NumberField(props: NumberFieldProps) {
     labelHidden,
     hint,
     error,
+    errorId,
     overBrim,
     caution,
     width,
@@ -32,7 +33,7 @@ export function NumberField(props: NumberFieldProps) {
     ...input
   } = props;
   const [hasTriedPaste, setHasTriedPaste] = useState(false);
-  const notes = { label, labelHidden, error, overBrim, caution, width };
+  const notes = { label, labelHidden, error, errorId, overBrim, caution, width };
   const refuse = (event: ClipboardEvent | DragEvent) => {
     event.preventDefault();
     setHasTriedPaste(true);
