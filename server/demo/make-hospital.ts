@@ -32,7 +32,7 @@ export type NewHospital<Key extends string> = {
   wards: readonly { name: string; isHighDependency?: boolean }[];
   people: Readonly<Record<Key, NewPerson>>;
   /** Drafts and approves rulebook 1. */
-  rulebookBy: readonly [draftedBy: Key, approvedBy: Key];
+  rulebookBy: readonly [draftedBy: NoInfer<Key>, approvedBy: NoInfer<Key>];
   /** argon2id of the one password everybody has. */
   passwordHash: string;
 };

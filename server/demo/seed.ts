@@ -19,7 +19,14 @@ import { deliverDue, type Post } from '../mail/deliver-due';
 import { startSmtpFake } from '../mail/smtp-fake';
 import { Screens } from './call-api';
 import { makeHospital, type MadeHospital } from './make-hospital';
-import { DEMO_HOSPITAL, DEMO_PASSWORD, DEMO_PEOPLE, DEMO_WARDS, DEMO_ZONE, type DemoPersonKey } from './people';
+import {
+  DEMO_HOSPITAL,
+  DEMO_PASSWORD,
+  DEMO_PEOPLE,
+  DEMO_WARDS,
+  DEMO_ZONE,
+  type DemoPersonKey,
+} from './people';
 import { play, timelineOf } from './play';
 import type { Scene } from './scene';
 
@@ -78,7 +85,8 @@ const seedEnv = (appUrl: string, origin: string) =>
 
 async function openPost(deps: Deps): Promise<{ post: Post; stop: () => Promise<void> }> {
   const fake = await startSmtpFake();
-  const transporter = createTransport(fake.smtpUrl);
+  // one connection for all of it: opening one for each letter takes longer than the letter
+  const transporter = createTransport({ url: fake.smtpUrl, pool: true } as never);
   const post = { transporter, from: deps.env.MAIL_FROM, publicUrl: deps.env.PUBLIC_URL };
   const stop = async () => {
     transporter.close();
