@@ -4,7 +4,6 @@ import { NavLink, Outlet, useLocation, useNavigate } from 'react-router-dom';
 import { OfflineBar } from '@/components/ui/offline-bar';
 import { Reading } from '@/components/ui/reading';
 import { SkipLink } from '@/components/ui/skip-link';
-import { ThemeSwitch } from '@/components/ui/theme-switch';
 import { TopBar } from '@/components/ui/top-bar';
 import { LockScreen } from '@/features/accounts/components/lock-screen';
 import { setMe, useMe } from '@/features/accounts/api/use-me';
@@ -80,11 +79,7 @@ function SignedIn({ me }: { me: Me }) {
         <TopBar
           time={formatTime(now, zone)}
           who={{ name: me.account.name, grade: me.account.title }}
-          extras={
-            <>
-              <ThemeSwitch /> <NavLink to="/account">My account</NavLink>
-            </>
-          }
+          extras={<NavLink to="/account">My account</NavLink>}
           onLock={() => lock.mutate()}
         >
           <Navigation me={me} />
