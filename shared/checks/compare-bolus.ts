@@ -29,7 +29,7 @@ export function compareBolus(bench: Bench, kg: Kilograms, entries: BolusEntries)
     fluidRow(bench, entries),
     comparedRow(
       'author-arithmetic',
-      'The order’s dose, on your weight',
+      'The order’s dose, on the checker’s weight',
       'fact',
       [ml(volume), recomputed === undefined ? 'cannot be worked out' : ml(recomputed)],
       {

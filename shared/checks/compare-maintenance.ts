@@ -196,11 +196,11 @@ function arithmeticRows(
     );
   const recomputed = follows(
     'author-arithmetic',
-    'The order’s choices, on your weight and intake',
+    'The order’s choices, on the checker’s weight and intake',
     author.workedOutRate,
     workedRate(authorOnCheckers),
   );
-  const yours = follows('own-arithmetic', 'Your rate, from your own entries', entries.rate, workedRate(own));
+  const yours = follows('own-arithmetic', 'The checker’s rate, from the checker’s entries', entries.rate, workedRate(own));
   // here the stated figure is the checker's own
   return [recomputed, { ...yours, author: yours.checker, checker: yours.author }];
 }
@@ -226,7 +226,7 @@ function figureRows({ rules, steps }: Bench, { author, entries, someChoiceDiffer
   const apart = apartBy(product, entries.volume, 'mL');
   return [
     ...rows,
-    comparedRow('own-volume', 'Your volume, from your rate and hours', 'fact', sides, {
+    comparedRow('own-volume', 'The checker’s volume, from that rate and hours', 'fact', sides, {
       agrees: false,
       apart,
     }),

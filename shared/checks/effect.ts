@@ -36,11 +36,11 @@ export function effectOfMaintenance(author: MaintenanceSide, checker: Maintenanc
       'g of glucose',
     ),
   ];
-  if (parts.length > 0) return `At your figures the child would get, in 24 h, ${listed(parts)}.`;
+  if (parts.length > 0) return `At the checker’s figures the child would get, in 24 h, ${listed(parts)}.`;
   const longer = snap(checker.hours - author.hours);
   if (longer !== 0) {
     const word = longer > 0 ? 'longer' : 'shorter';
-    return `At your figures the rate is the same and the order would run ${formatNumber(Math.abs(longer), 1)} h ${word}.`;
+    return `At the checker’s figures the rate is the same and the order would run ${formatNumber(Math.abs(longer), 1)} h ${word}.`;
   }
   return 'What goes on the pump would be the same.';
 }
@@ -52,7 +52,7 @@ export function effectOfBolus(author: BolusSide, checker: BolusSide): string {
   const sentences = [
     ...volume.map(
       (words) =>
-        `At your figures the child would get ${words} (${formatNumber(Math.abs(perKg), 1)} mL/kg apart).`,
+        `At the checker’s figures the child would get ${words} (${formatNumber(Math.abs(perKg), 1)} mL/kg apart).`,
     ),
     ...part(snap(checker.over - author.over), 0, 'min').map((words) => `It would take ${words}.`),
   ];

@@ -161,7 +161,7 @@ describe('maintenance, fact by fact and choice by choice', () => {
     expect(rate).toMatchObject({ author: '55 mL/h', checker: '44 mL/h', apart: '11 mL/h apart' });
     // 11 × 24 = 264 mL; × 20 mmol/L = 5.28; × 154 = 40.7; × 50 g/L = 13.2
     expect(comparison.effect).toBe(
-      'At your figures the child would get, in 24 h, 264 mL less, 5.3 mmol of potassium less, 41 mmol of sodium less and 13 g of glucose less.',
+      'At the checker’s figures the child would get, in 24 h, 264 mL less, 5.3 mmol of potassium less, 41 mmol of sodium less and 13 g of glucose less.',
     );
   });
 
