@@ -29,8 +29,13 @@ export async function loadChildHead(
 }
 
 /** A weight that looked wrong may be used once what it needed has been done. */
-export const isUsable = (row: Pick<typeof weights.$inferSelect, 'needs' | 'confirmedAt'>): boolean =>
-  row.needs === 'nothing' || row.confirmedAt !== null;
+export const isUsable = (
+  row: Pick<typeof weights.$inferSelect, 'needs' | 'confirmedAt' | 'secondAt'>,
+): boolean =>
+  row.needs === 'nothing' ||
+  row.confirmedAt !== null ||
+  // a second reading is stored only where it agrees; another person's is a confirmation
+  (row.needs === 'second-measurement' && row.secondAt !== null);
 
 /** The weights of a chart, newest first, corrected ones left out. */
 export async function loadWeights(

@@ -18,7 +18,7 @@ export async function lockChild(tx: Tx, childId: string): Promise<void> {
 /** Child first, then the version, in the order every act locks. Null where there is no such version. */
 export async function lockVersion(
   tx: Tx,
-  actor: Actor,
+  actor: Pick<Actor, 'id'>,
   versionId: string,
   now: Instant,
 ): Promise<LoadedVersion | null> {
