@@ -15,6 +15,7 @@ import { formatTime, instant } from '@shared/time';
 import type { Me } from '@shared/routes/accounts';
 import { ServerSilent } from './server-silent';
 import { useShortcuts } from './use-shortcuts';
+import { WardLinks } from './ward-links';
 
 /** A session that locked while a page was asking: the lock screen takes over, the page stays mounted. */
 function useLockNotice(): void {
@@ -47,11 +48,7 @@ function Navigation({ me }: { me: Me }) {
   const count = useQueueCount(me);
   return (
     <>
-      {me.wards.map((ward) => (
-        <NavLink key={ward.id} to={`/wards/${ward.id}`}>
-          {ward.name} ward
-        </NavLink>
-      ))}
+      <WardLinks wards={me.wards} />
       <NavLink to="/checks">My checks{count === null || count === 0 ? '' : `, ${count}`}</NavLink>
       {me.wards.some(({ entitlements }) => entitlements.includes('senior')) && (
         <NavLink to="/exceptions">Senior decisions</NavLink>
