@@ -1,4 +1,4 @@
-import { HOUR, instant, type Instant } from '@shared/time';
+import { HOUR, instant, MINUTE, type Instant } from '@shared/time';
 import { createServer, type Server } from 'node:http';
 import type { AddressInfo } from 'node:net';
 import { createTransport } from 'nodemailer';
@@ -17,6 +17,7 @@ import { makeLog } from '../http/make-log';
 import { verifyChain } from '../ledger/verify';
 import { deliverDue, type Post } from '../mail/deliver-due';
 import { startSmtpFake } from '../mail/smtp-fake';
+import { sweepHospital } from '../sweep/sweep';
 import { Screens } from './call-api';
 import { makeHospital, type MadeHospital } from './make-hospital';
 import {
@@ -38,6 +39,9 @@ const STORIES = [...HERON_FRONT, ...HERON_BACK, ...CURLEW, ...PLOVER, ...WREN];
 const BEGINS_BEFORE = 72 * HOUR;
 /** Mail younger than this is left for the program itself, so that the demo's mailbox is not empty. */
 const MAIL_LEFT = 2 * HOUR;
+
+/** Often enough that reminders and lapses come at about their own time. */
+const SWEEP_EVERY = 10 * MINUTE;
 
 const closed = (server: Server): Promise<void> =>
   new Promise((done) => {
@@ -112,12 +116,20 @@ async function playAll(
   moveClock: (at: Instant) => void,
 ): Promise<void> {
   const { hospital, now } = scene;
+  let swept = now - BEGINS_BEFORE;
+  const sweepAt = async (at: number) => {
+    swept = at;
+    moveClock(instant(at));
+    await sweepHospital(deps, hospital.id);
+    if (now - at > MAIL_LEFT) await deliverDue(deps.db, post, hospital);
+  };
   for (const planned of timelineOf(STORIES, now)) {
+    // what falls due between two steps happens before the second
+    while (planned.at - swept >= SWEEP_EVERY) await sweepAt(Math.min(swept + HOUR, planned.at));
     moveClock(planned.at);
     await play(scene, planned);
-    if (now - planned.at > MAIL_LEFT) await deliverDue(deps.db, post, hospital);
   }
-  moveClock(now);
+  await sweepAt(now);
   await scene.screens.signOutAll();
 }
 
