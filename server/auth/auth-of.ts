@@ -40,6 +40,20 @@ export function authOf(deps: Deps): Auth {
   return auth;
 }
 
+/** The secret in a Cookie header; undefined when there is none. Read by hand: a cookie of another program may be no text. */
+export function secretIn(
+  deps: Deps,
+  purpose: 'session' | 'beside',
+  cookieHeader: string,
+): string | undefined {
+  const name = `${cookieName(deps, purpose)}=`;
+  const pair = cookieHeader
+    .split(';')
+    .map((part) => part.trim())
+    .find((part) => part.startsWith(name));
+  return pair?.slice(name.length) || undefined;
+}
+
 /** A Set-Cookie for a visit beside someone: sent to the beside routes only. */
 export function besideCookie(deps: Deps, secret: string, seconds: number): string {
   const flags = `Path=/api/beside; Max-Age=${seconds}; HttpOnly; SameSite=Strict${secure(deps) ? '; Secure' : ''}`;

@@ -4,7 +4,7 @@ import { randomBytes } from 'node:crypto';
 import type { Outcome } from '../db/in-hospital';
 import { done, refused } from '../db/outcome';
 import type { Deps } from '../http/deps';
-import { besideCookie, cookieName } from './auth-of';
+import { besideCookie, secretIn } from './auth-of';
 import { actorOf } from './knock';
 import { hashOfSecret, insertValues, readSessionRow } from './session-adapter';
 import { DELETE_SESSION, INSERT_SESSION, RELEASE_SESSION, SUSPEND_SESSION } from './session-sql';
@@ -62,7 +62,7 @@ export async function openBesideSession(
 
 /** The visit a request belongs to, from its own cookie; null when there is none or its time is over. */
 export async function readBesideSession(deps: Deps, cookieHeader: string): Promise<BesideVisit | null> {
-  const secret = secretIn(cookieHeader, cookieName(deps, 'beside'));
+  const secret = secretIn(deps, 'beside', cookieHeader);
   if (secret === undefined) return null;
   const row = await readSessionRow(deps, hashOfSecret(secret));
   if (row === null || row.kind !== 'beside' || row.account === null || row.isDisabled) return null;
@@ -81,13 +81,4 @@ export async function closeBesideSession(deps: Deps, visit: BesideVisit): Promis
   await deps.db.sql.unsafe(RELEASE_SESSION, [sessionId], { prepare: true });
   await deps.db.sql.unsafe(DELETE_SESSION, [sessionId], { prepare: true });
   return besideCookie(deps, '', 0);
-}
-
-function secretIn(cookieHeader: string, name: string): string | undefined {
-  const pair = cookieHeader
-    .split(';')
-    .map((part) => part.trim())
-    .find((part) => part.startsWith(`${name}=`));
-  const secret = pair?.slice(name.length + 1);
-  return secret === undefined || secret === '' ? undefined : secret;
 }

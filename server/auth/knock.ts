@@ -1,7 +1,7 @@
 import type { Actor } from '@shared/accounts/actor';
 import type { Request } from 'express';
 import { depsOf, type Deps } from '../http/deps';
-import { authOf } from './auth-of';
+import { authOf, secretIn } from './auth-of';
 import type { SessionRow } from './session-adapter';
 import { TOUCH_SESSION } from './session-sql';
 
@@ -58,10 +58,9 @@ export async function knock(deps: Deps, request: Request): Promise<Visit> {
   const cookieHeader = request.headers.cookie ?? '';
   const agent = request.get('user-agent') ?? '';
   const outside = { standing: 'none', words: WORDS.none, actor: null, session: null } as const;
-  const auth = authOf(deps);
-  const secret = auth.readSessionCookie(cookieHeader);
-  if (secret === null || secret === '') return { ...outside, cookieHeader, agent };
-  const { session } = await auth.validateSession(secret);
+  const secret = secretIn(deps, 'session', cookieHeader);
+  if (secret === undefined) return { ...outside, cookieHeader, agent };
+  const { session } = await authOf(deps).validateSession(secret);
   if (session === null || session.row.kind !== 'own') return { ...outside, cookieHeader, agent };
   const standing = standingOf(session.row, deps.clock.now());
   if (standing === 'open' && request.get(BACKGROUND) === undefined) await touch(deps, session.row);

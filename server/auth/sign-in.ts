@@ -1,7 +1,7 @@
 import type { Deps } from '../http/deps';
 import { inHospital, refused, theProgram, type Outcome } from '../db/in-hospital';
 import { done } from '../db/outcome';
-import { authOf } from './auth-of';
+import { authOf, secretIn } from './auth-of';
 import { actorOf, type Visit } from './knock';
 import { readSessionRow, hashOfSecret, type SessionRow } from './session-adapter';
 import { LOGIN_BY_EMAIL } from './session-sql';
@@ -44,8 +44,8 @@ export async function signIn(
   const loginId = await identify(deps, credentials);
   if (loginId === undefined) return signInRefusal(deps);
   const auth = authOf(deps);
-  const earlier = auth.readSessionCookie(visit.cookieHeader);
-  if (earlier !== null && earlier !== '') await auth.invalidateSession(earlier);
+  const earlier = secretIn(deps, 'session', visit.cookieHeader);
+  if (earlier !== undefined) await auth.invalidateSession(earlier);
   const made = await auth.createSession(loginId, { kind: 'own', agent: visit.agent });
   const session = await readSessionRow(deps, hashOfSecret(made.id));
   if (session === null || session.account === null || session.isDisabled) {
@@ -60,7 +60,7 @@ export async function signIn(
 /** Ends a session; the cookie in the answer clears the browser's. */
 export async function signOut(deps: Deps, visit: Visit): Promise<string> {
   const auth = authOf(deps);
-  const secret = auth.readSessionCookie(visit.cookieHeader);
-  if (secret !== null && secret !== '') await auth.invalidateSession(secret);
+  const secret = secretIn(deps, 'session', visit.cookieHeader);
+  if (secret !== undefined) await auth.invalidateSession(secret);
   return auth.createBlankSessionCookie().serialize();
 }

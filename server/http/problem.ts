@@ -34,7 +34,7 @@ export const noSuchRoute: RequestHandler = (_request, response) => {
 
 /** body-parser says what was wrong by `type`; everything else without one is ours. */
 const BODY_FAULTS: Readonly<Record<string, string>> = {
-  'entity.parse.failed': 'The request is not valid JSON.',
+  'entity.parse.failed': 'The request is not valid JSON, or holds characters that cannot be stored.',
   'entity.too.large': 'The request is larger than this program takes.',
   'encoding.unsupported': 'The request is in an encoding this program does not read.',
   'charset.unsupported': 'The request is in a character set this program does not read.',

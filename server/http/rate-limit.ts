@@ -1,6 +1,8 @@
 import type { Request, RequestHandler } from 'express';
 import { ipKeyGenerator, rateLimit } from 'express-rate-limit';
-import { createHash } from 'node:crypto';
+import { secretIn } from '../auth/auth-of';
+import { hashOfSecret } from '../auth/session-adapter';
+import { depsOf } from './deps';
 import { sendProblem } from './problem';
 
 /** Requests a minute, counted in this process alone; lockout of an account is the database's matter. */
@@ -10,9 +12,12 @@ export const RATES: Rates = { all: 1200, signIn: 60 };
 const byAddress = (request: Request): string => ipKeyGenerator(request.ip ?? '');
 
 const bySession = (request: Request): string => {
-  const { cookie } = request.headers;
-  return cookie === undefined ? byAddress(request) : createHash('sha256').update(cookie).digest('base64');
+  const secret = secretIn(depsOf(request), 'session', request.headers.cookie ?? '');
+  return secret === undefined ? byAddress(request) : hashOfSecret(secret);
 };
+
+/** People of one hospital may share an address; a made-up session for every request does not count apart for ever. */
+const SESSIONS_AN_ADDRESS = 10;
 
 const limiter = (limit: number, keyGenerator: (request: Request) => string): RequestHandler =>
   rateLimit({
@@ -27,8 +32,11 @@ const limiter = (limit: number, keyGenerator: (request: Request) => string): Req
     },
   });
 
-/** By session where there is one, else by address. */
-export const limitAll = (rates: Rates): RequestHandler => limiter(rates.all, bySession);
+/** By session where one is sent, else by address; and by address in all. */
+export const limitAll = (rates: Rates): RequestHandler[] => [
+  limiter(rates.all * SESSIONS_AN_ADDRESS, byAddress),
+  limiter(rates.all, bySession),
+];
 
 /** By address: whoever signs in has no session yet. */
 export const limitSignIn = (rates: Rates): RequestHandler => limiter(rates.signIn, byAddress);

@@ -77,7 +77,7 @@ export const accountRoutes = {
     path: '/api/sessions/:id/revoke',
     access: 'session',
     figures: 'never',
-    params: z.object({ id: z.string().max(100) }),
+    params: z.object({ id: z.string().regex(/^[0-9a-f]{64}$/) }),
     body: z.object({}),
     response: done,
   }),

@@ -5,7 +5,7 @@ import { orderContentSchema } from '../orders/content';
 import { URGENCIES } from '../orders/form';
 import { VERSION_STATES } from '../orders/states';
 import { childHeadSchema, weightSchema } from './children';
-import { at, decimalText, done, get, id, idParams, password, post, put, reason } from './define';
+import { at, decimalText, done, get, id, idParams, password, post, put, reason, rev } from './define';
 import { productSchema, verdictSchema } from './orders';
 
 /** A covered order: its own type, never the order with fields blanked. No author, weight, fluid, duration, route or line. */
@@ -96,7 +96,7 @@ export const checkRoutes = {
     access: 'clinical',
     figures: 'never',
     params: idParams,
-    body: z.object({ rev: z.int(), form: checkFormSchema }),
+    body: z.object({ rev, form: checkFormSchema }),
     response: z.object({ rev: z.int(), savedAt: at }),
   }),
   lockIn: post({
@@ -164,7 +164,7 @@ export const checkRoutes = {
     path: '/api/beside/draft',
     access: 'public',
     figures: 'never',
-    body: z.object({ rev: z.int(), form: checkFormSchema }),
+    body: z.object({ rev, form: checkFormSchema }),
     response: z.object({ rev: z.int(), savedAt: at }),
   }),
   besideLockIn: post({

@@ -32,6 +32,8 @@ export const put = <const R extends Omit<RouteDefinition, 'method'>>(route: R): 
 });
 
 export const id = z.uuid();
+/** The lock counter of an editable row, as the database can hold it. */
+export const rev = z.int32().min(0);
 export const idParams = z.object({ id });
 /** RFC 3339 with milliseconds and Z. */
 export const at = z.string();
