@@ -13,6 +13,7 @@ import { makeLog } from './http/make-log';
 import { mailboxRouter } from './mail/mailbox';
 import { startSmtpFake, type SmtpFake } from './mail/smtp-fake';
 import { startMailWorker } from './mail/worker';
+import { startSweep } from './sweep/sweep';
 
 type Stop = () => Promise<void>;
 
@@ -39,15 +40,16 @@ async function listen(deps: Deps, fake: SmtpFake | undefined): Promise<Stop> {
     });
 }
 
-/** What goes on without requests: mail. */
+/** What goes on without requests: the sweep of what falls due, and mail. */
 async function startWork(deps: Deps, fake: SmtpFake | undefined): Promise<Stop[]> {
+  const sweep = startSweep(deps);
   const smtpUrl = fake?.smtpUrl ?? deps.env.SMTP_URL;
   if (smtpUrl === undefined) {
     deps.log.warn('SMTP_URL is not set: mail waits in the outbox');
-    return [];
+    return [sweep];
   }
   const worker = await startMailWorker({ ...deps, smtpUrl });
-  return fake === undefined ? [worker] : [worker, fake.stop];
+  return fake === undefined ? [sweep, worker] : [sweep, worker, fake.stop];
 }
 
 async function main(): Promise<void> {

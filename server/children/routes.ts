@@ -45,19 +45,19 @@ function bindPlaces(router: Router): void {
   });
 
   bind(router, ROUTES.editChild, ({ deps, actor, key, params, body }) => {
-    const attempt = { act: 'child-edited', subject: child(params.id) } as const;
+    const attempt = { act: 'child-edited', subject: child(params.id), child: params.id } as const;
     const request = ['edit-child', params.id, body];
     return inHospital(deps.db, actor, { key, request, attempt }, editChild(actor, params.id, body));
   });
 
   bind(router, ROUTES.transferChild, ({ deps, actor, key, params, body }) => {
-    const attempt = { act: 'child-transferred', subject: child(params.id) } as const;
+    const attempt = { act: 'child-transferred', subject: child(params.id), child: params.id } as const;
     const request = ['transfer-child', params.id, body];
     return inHospital(deps.db, actor, { key, request, attempt }, transferChild(actor, params.id, body));
   });
 
   bind(router, ROUTES.dischargeChild, ({ deps, actor, key, params }) => {
-    const attempt = { act: 'child-discharged', subject: child(params.id) } as const;
+    const attempt = { act: 'child-discharged', subject: child(params.id), child: params.id } as const;
     const request = ['discharge-child', params.id];
     return inHospital(deps.db, actor, { key, request, attempt }, dischargeChild(actor, params.id));
   });
@@ -65,13 +65,13 @@ function bindPlaces(router: Router): void {
 
 function bindChartEntries(router: Router): void {
   bind(router, ROUTES.recordIntake, ({ deps, actor, key, params, body }) => {
-    const attempt = { act: 'intake-recorded', subject: child(params.id) } as const;
+    const attempt = { act: 'intake-recorded', subject: child(params.id), child: params.id } as const;
     const request = ['record-intake', params.id, body];
     return inHospital(deps.db, actor, { key, request, attempt }, recordIntake(actor, params.id, body));
   });
 
   bind(router, ROUTES.setFluidPlan, ({ deps, actor, key, params, body }) => {
-    const attempt = { act: 'fluid-plan-set', subject: child(params.id) } as const;
+    const attempt = { act: 'fluid-plan-set', subject: child(params.id), child: params.id } as const;
     const request = ['fluid-plan', params.id, body];
     return inHospital(deps.db, actor, { key, request, attempt }, setFluidPlan(actor, params.id, body));
   });

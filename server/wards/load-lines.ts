@@ -6,8 +6,8 @@ import type { OrderLine } from '@shared/routes/children';
 import { toRfc3339, type Instant } from '@shared/time';
 import { and, asc, eq, gt, inArray, or, sql, type SQL } from 'drizzle-orm';
 import { accounts } from '../db/schema/accounts';
-import { coveredVersions } from '../db/schema/covered-versions';
-import { orderVersions, versionIsLive } from '../db/schema/orders';
+import { coveredIsLive, coveredVersions } from '../db/schema/covered-versions';
+import { orderVersions } from '../db/schema/orders';
 import type { Tx } from '../db/transaction';
 import { nextDue, presentOpen, type LineClock } from '../orders/present-line';
 
@@ -101,7 +101,7 @@ export async function loadLines(
   const wanted = and(
     inArray(coveredVersions.childId, [...childIds]),
     or(
-      versionIsLive,
+      coveredIsLive,
       and(inArray(coveredVersions.state, [...ended.states]), gt(coveredVersions.stateSince, ended.since)),
     ),
   );

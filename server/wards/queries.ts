@@ -26,7 +26,10 @@ export async function findWard(tx: Tx, wardId: string): Promise<{ id: string; na
   return ward;
 }
 
-type WeightRecord = Pick<typeof weights.$inferSelect, 'kg' | 'method' | 'at' | 'needs' | 'confirmedAt'>;
+type WeightRecord = Pick<
+  typeof weights.$inferSelect,
+  'kg' | 'method' | 'at' | 'needs' | 'confirmedAt' | 'secondAt'
+>;
 export type ChildOnWard = { child: ChildRow; bed: string | null; weights: WeightRecord[] };
 
 /** The children of a ward in the order of their beds, each with its newest weights, in one statement. */
@@ -38,6 +41,7 @@ export async function childrenOnWard(tx: Tx, wardId: string): Promise<ChildOnWar
       at: weights.at,
       needs: weights.needs,
       confirmedAt: weights.confirmedAt,
+      secondAt: weights.secondAt,
     })
     .from(weights)
     .where(and(eq(weights.childId, children.id), isNull(weights.supersededBy)))

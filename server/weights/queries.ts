@@ -13,6 +13,7 @@ export async function weightHistory(tx: Tx, childId: string): Promise<ChartWeigh
       at: weights.at,
       needs: weights.needs,
       confirmedAt: weights.confirmedAt,
+      secondAt: weights.secondAt,
     })
     .from(weights)
     .where(and(eq(weights.childId, childId), isNull(weights.supersededBy)))

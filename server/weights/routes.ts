@@ -8,7 +8,11 @@ import { recordWeight } from './commands/record-weight';
 /** Weights: a first reading, and the second one a doubtful weight owes. */
 export function bindWeights(router: Router): void {
   bind(router, ROUTES.recordWeight, ({ deps, actor, key, params, body }) => {
-    const attempt = { act: 'weight-recorded', subject: { kind: 'child', id: params.id } } as const;
+    const attempt = {
+      act: 'weight-recorded',
+      subject: { kind: 'child', id: params.id },
+      child: params.id,
+    } as const;
     const request = ['record-weight', params.id, body];
     return inHospital(deps.db, actor, { key, request, attempt }, recordWeight(actor, params.id, body));
   });

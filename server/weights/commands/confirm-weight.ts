@@ -79,7 +79,7 @@ async function settle(scene: Scene, second: Second): Promise<Outcome<Confirmed>>
       secondMethod: second.method,
       secondAt: second.at,
       secondBy: actor.id,
-      ...(byAnotherPerson ? { confirmedBy: actor.id, confirmedAt: now } : { needs: 'nothing' as const }),
+      ...(byAnotherPerson && { confirmedBy: actor.id, confirmedAt: now }),
     })
     .where(eq(weights.id, first.id));
   const to = { first: decimalText(first.kg, 3), second: decimalText(second.kg, 3) };

@@ -7,7 +7,7 @@ import { assessWeight, type WeightOpinion } from '@shared/weights/assess';
 import { kgText } from '@shared/weights/chart-weight';
 import { KG_FIELD } from '@shared/weights/limits';
 import { readWeightForm, type WeightForm } from '@shared/weights/schema';
-import { settleSecondReading } from '@shared/weights/second-reading';
+import { settleSecondReading, type ReadingLimits } from '@shared/weights/second-reading';
 import { kilograms, type Kilograms } from '@shared/units';
 import type { Instant } from '@shared/time';
 import type { Command } from '../../db/in-hospital';
@@ -31,7 +31,7 @@ export type NewWeight = {
   method: WeightForm['method'];
   at: Instant;
   opinion: WeightOpinion;
-  /** What is owed before an order may use it. */
+  /** What its assessment asked for before an order may use it. */
   needs: Needs;
   second?: { kg: Kilograms };
 };
@@ -56,21 +56,32 @@ export const recordWeight =
     const history = await weightHistory(tx, childId);
     const opinion = assessWeight({ kg, method, at, child, history, zone }, ruleValues(rulebook, 'weight'));
     const weight: NewWeight = { childId, kg, method, at, opinion, needs: needsOf(opinion) };
-    if (opinion.verdict === 'second-measurement' && body.secondReadingKg !== null) {
-      const second = readDecimal(body.secondReadingKg, KG_FIELD);
-      if (!second.ok) return badField('secondReadingKg', second.message);
-      const reading = { verdict: opinion.verdict, first: kg, second: second.value, byAnotherPerson: false };
-      const settled = settleSecondReading(reading, ruleValues(rulebook, 'check'));
-      if (!settled.usable) return readingsDiffer(weight, second.value, settled.text);
-      weight.needs = 'nothing';
-      weight.second = { kg: kilograms(second.value) };
-    }
+    const fault = takeSecondReading(weight, body.secondReadingKg, ruleValues(rulebook, 'check'));
+    if (fault !== null) return fault;
     const weightId = await storeWeight(tx, actor, weight, now);
     return done(
-      { weightId, usable: weight.needs === 'nothing', needs: weight.needs, words: wordsFor(weight) },
+      { weightId, usable: owed(weight) === 'nothing', needs: owed(weight), words: wordsFor(weight) },
       { entries: [recordedEntry(weightId, weight)], nearMisses: missesOf(weight) },
     );
   };
+
+/** Adds a second reading the person took at once; the refusal where it cannot be read or is another weight. */
+function takeSecondReading(weight: NewWeight, text: string | null, limits: ReadingLimits): Refused | null {
+  if (text === null) return null;
+  const second = readDecimal(text, KG_FIELD);
+  if (!second.ok) return badField('secondReadingKg', second.message);
+  const { verdict } = weight.opinion;
+  const reading = { verdict, first: weight.kg, second: second.value, byAnotherPerson: false };
+  const settled = settleSecondReading(reading, limits);
+  if (!settled.usable && settled.code === 'readings-differ') {
+    return readingsDiffer(weight, second.value, settled.text);
+  }
+  if (settled.usable) weight.second = { kg: kilograms(second.value) };
+  return null;
+}
+
+/** What is still owed: an agreeing second reading pays for a second measurement, not for a second person. */
+const owed = ({ needs, second }: NewWeight): Needs => (second === undefined ? needs : 'nothing');
 
 const badField = (field: string, detail: string): Refused =>
   refused('bad-input', {
