@@ -14,7 +14,11 @@ export const read = async (client: Client, versionId: string): Promise<Draft> =>
 
 export type Started = { orderId: string; versionId: string; code: string };
 
-export async function start(client: Client, childId: string, kind: 'maintenance' | 'bolus'): Promise<Started> {
+export async function start(
+  client: Client,
+  childId: string,
+  kind: 'maintenance' | 'bolus',
+): Promise<Started> {
   const answer = await client.call(ROUTES.startDraft, {
     params: { id: childId },
     body: { kind, followsOrderId: null },
