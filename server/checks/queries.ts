@@ -3,10 +3,10 @@ import type { Kind } from '@shared/calc/types';
 import type { Urgency } from '@shared/orders/form';
 import type { VersionState } from '@shared/orders/states';
 import type { Instant } from '@shared/time';
-import { and, asc, eq, inArray, isNull, or, sql, type SQL } from 'drizzle-orm';
+import { and, asc, eq, inArray, isNull, ne, or, sql, type SQL } from 'drizzle-orm';
 import { checks, exceptions, seenFigures } from '../db/schema/checks';
 import { children, stays } from '../db/schema/children';
-import { coveredVersions } from '../db/schema/covered-versions';
+import { coveredIsLive, coveredVersions } from '../db/schema/covered-versions';
 import { wards } from '../db/schema/hospitals';
 import { orderVersions } from '../db/schema/orders';
 import type { Tx } from '../db/transaction';
@@ -55,13 +55,17 @@ export async function findCovered(tx: Tx, versionId: string): Promise<CoveredRow
   return row;
 }
 
-const CHECKABLE: readonly VersionState[] = ['awaiting-check', 'given'];
+const QUEUED: readonly VersionState[] = ['awaiting-check', 'given', 'disputed'];
 
-/** States in which an order waits for one who checks, and disputes of the reader's own. */
+/** Live orders that wait for one who checks, and disputes of the reader's own. */
 const forChecker = (actor: Actor): SQL | undefined =>
-  or(
-    inArray(coveredVersions.state, [...CHECKABLE]),
-    and(eq(coveredVersions.state, 'disputed'), eq(checks.checkerId, actor.id), eq(checks.state, 'differed')),
+  and(
+    coveredIsLive,
+    inArray(coveredVersions.state, [...QUEUED]),
+    or(
+      ne(coveredVersions.state, 'disputed'),
+      and(eq(checks.checkerId, actor.id), eq(checks.state, 'differed')),
+    ),
   );
 
 /** The reader's wards; a lead sees the hospital. */
