@@ -56,7 +56,8 @@ export function makeApp(deps: Deps, options: AppOptions = {}): Express {
   const router = Router();
   bindCspReports(router);
   router.use('/api', sameOrigin, express.json({ limit: '256kb', strict: true, reviver: storableText }));
-  router.post('/api/sign-in', limitSignIn(rates));
+  // wherever another person's password may be tried
+  router.post(['/api/sign-in', '/api/checks/:id/beside', '/api/versions/:id/start'], limitSignIn(rates));
   for (const bindNoun of NOUNS) bindNoun(router);
   router.use('/api', noSuchRoute);
   app.use(router);

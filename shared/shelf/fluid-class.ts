@@ -14,13 +14,3 @@ export function fluidClass(
   const tonicity = isLow ? 'hypotonic' : fluid.sodium > hypertonicAbove ? 'hypertonic' : 'isotonic';
   return { tonicity, hasGlucose: fluid.glucoseGPerL > 0 };
 }
-
-/** Whether two fluids are of one class: same tonicity, and glucose in both or in neither. */
-export function isSameClass(
-  a: Pick<FluidComposition, 'sodium' | 'glucoseGPerL'>,
-  b: Pick<FluidComposition, 'sodium' | 'glucoseGPerL'>,
-  rulebook: Rulebook,
-): boolean {
-  const [left, right] = [fluidClass(a, rulebook), fluidClass(b, rulebook)];
-  return left.tonicity === right.tonicity && left.hasGlucose === right.hasGlucose;
-}
