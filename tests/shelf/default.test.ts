@@ -69,12 +69,4 @@ describe('the class of a fluid', () => {
   ])('%s is %s, glucose %s', (name, tonicity, hasGlucose) => {
     expect(fluidClass(byName(name), DEFAULT_RULEBOOK)).toEqual({ tonicity, hasGlucose });
   });
-
-  it('is shared by fluids of the same tonicity and glucose', () => {
-    const [saline, balanced, sweet] = [
-      'Sodium chloride 0.9%',
-      'Balanced crystalloid 140',
-      'Sodium chloride 0.9% + glucose 5%',
-    ].map(byName);
-  });
 });
