@@ -57,10 +57,10 @@ async function main(): Promise<void> {
   const log = makeLog(env.LOG_LEVEL);
   const clock = clockFor(env);
   const db = openDatabase(env.DATABASE_URL, { clock });
-  await assertSafeRole(db);
   if (!(await schemaIsCurrent(db))) {
     throw new Error('The database has an older schema than this program: run the migrations first.');
   }
+  await assertSafeRole(db);
   const deps: Deps = { db, clock, env, log };
   const fake = env.BRIMLINE_MAILBOX === undefined ? undefined : await startSmtpFake();
   // stopped in turn: no new requests first, the pool last
