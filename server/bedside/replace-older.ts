@@ -1,5 +1,6 @@
 import type { Actor } from '@shared/accounts/actor';
 import { decideByClock } from '@shared/orders/decide';
+import { isOnPump, STATE_WORDS } from '@shared/orders/states';
 import type { Instant } from '@shared/time';
 import { eq } from 'drizzle-orm';
 import { refused, type Refused } from '../db/outcome';
@@ -9,7 +10,7 @@ import type { LedgerNote } from '../ledger/entries';
 import { loadFacts, type LoadedVersion } from '../orders/facts';
 import { noteOf } from '../orders/lock-version';
 import { moveVersion } from '../orders/move-version';
-import type { RecordStart } from './commands/record-start';
+import type { RecordStart } from './start-request';
 import { connectedTo, findInfusion, type Connected } from './queries';
 
 /**
@@ -25,8 +26,13 @@ export async function judgeConnected(
   if (row.kind !== 'maintenance') return undefined;
   const others = await connectedTo(tx, row.childId, row.id);
   const older = others.filter(({ kind }) => kind === 'maintenance');
-  if (replacesVersionId !== null && !older.some(({ versionId }) => versionId === replacesVersionId)) {
+  const replaced = older.find(({ versionId }) => versionId === replacesVersionId);
+  if (replacesVersionId !== null && replaced === undefined) {
     return somethingRuns(version, older, 'What was to be replaced does not run any more. Look again.');
+  }
+  if (replaced !== undefined && !isOnPump(replaced.state)) {
+    const words = `${replaced.code} is ${STATE_WORDS[replaced.state].toLowerCase()}. Stop it, then start this one.`;
+    return somethingRuns(version, [replaced], words);
   }
   const left = older.filter(({ versionId }) => versionId !== replacesVersionId);
   if (left[0] !== undefined) {

@@ -1,4 +1,4 @@
-import type { LimitFinding, WorkOutRequest } from '@shared/calc/types';
+import type { Kind, LimitFinding, WorkOutRequest } from '@shared/calc/types';
 import { workOut } from '@shared/calc/work-out';
 import { buildContent } from '@shared/orders/build-content';
 import { rulebookOf } from '@shared/orders/chart-facts';
@@ -34,13 +34,17 @@ export type VersionWork =
 
 type Version = Pick<VersionRow, 'orderId' | 'childId' | 'version'>;
 
-/** The chart of a version's child, less the order itself and the one it follows; null where the child is gone. */
+/** A maintenance takes the place of the one it follows; a bolus comes on top of the one it copies. */
+export const followedIsReplaced = (kind: Kind): boolean => kind === 'maintenance';
+
+/** The chart of a version's child, less the order itself and the maintenance it takes over from; null where the child is gone. */
 export async function loadVersionContext(tx: Tx, version: Version, hospitalId: string, now: Instant) {
   const [order] = await tx
-    .select({ code: orders.code, follows: orders.follows })
+    .select({ code: orders.code, kind: orders.kind, follows: orders.follows })
     .from(orders)
     .where(eq(orders.id, version.orderId));
-  const except = order?.follows ? [version.orderId, order.follows] : [version.orderId];
+  const takesOver = order?.follows && followedIsReplaced(order.kind) ? [order.follows] : [];
+  const except = [version.orderId, ...takesOver];
   const loaded = await loadContext(tx, { hospitalId, childId: version.childId, except }, now);
   return loaded && { ...loaded, code: order?.code ?? '', follows: order?.follows ?? null };
 }

@@ -1,5 +1,5 @@
 import type { Actor } from '@shared/accounts/actor';
-import { isOnWard } from '@shared/accounts/actor';
+import { can } from '@shared/orders/can';
 import { maySee } from '@shared/orders/coverage';
 import { isOverdue, isSigned, STATE_WORDS } from '@shared/orders/states';
 import { toRfc3339, type Instant } from '@shared/time';
@@ -51,7 +51,7 @@ export async function paperStanding(
 
 async function orderFor(tx: Tx, actor: Actor, versionId: string, now: Instant): Promise<Standing['order']> {
   const loaded = await loadFacts(tx, actor, versionId, now);
-  if (loaded === null || loaded.ward === null || !isOnWard(actor, loaded.ward.id) || !maySee(loaded.coverage))
-    return null;
+  if (loaded === null || loaded.ward === null || !maySee(loaded.coverage)) return null;
+  if (!can(actor, 'print-order', loaded.ward.id).allowed) return null;
   return { versionId, code: loaded.code };
 }

@@ -1,5 +1,5 @@
 import type { Actor } from '@shared/accounts/actor';
-import { isOnWard } from '@shared/accounts/actor';
+import { can } from '@shared/orders/can';
 import { maySee } from '@shared/orders/coverage';
 import { PRINT_PDF_PATH, ROUTES } from '@shared/routes';
 import type { Request, Response, Router } from 'express';
@@ -62,7 +62,8 @@ async function readPaper(deps: ReturnType<typeof depsOf>, actor: Actor, code: st
   if (print?.hospitalId !== actor.hospitalId) return refused('not-found');
   return await readInHospital(deps.db, actor, async (tx, now) => {
     const loaded = await loadFacts(tx, actor, print.versionId, now);
-    const isTheirs = loaded?.ward && isOnWard(actor, loaded.ward.id) && maySee(loaded.coverage);
+    const isTheirs =
+      loaded?.ward && can(actor, 'print-order', loaded.ward.id).allowed && maySee(loaded.coverage);
     if (!isTheirs) return refused('not-found');
     const paper = await loadPaper(tx, code, deps.env.PUBLIC_URL, () =>
       draftContent(tx, loaded, actor.hospitalId, now),

@@ -27,9 +27,9 @@ export const hasRole = (actor: Pick<Actor, 'roles'>, roles: readonly Role[]): bo
 
 export const isClinical = (actor: Pick<Actor, 'roles'>): boolean => hasRole(actor, CLINICAL_ROLES);
 
-/** People see children on their wards only; a lead sees the whole hospital. */
+/** People see children on their wards only; a lead sees the whole hospital. The empty ward, of a discharged child, is nobody's. */
 export const isOnWard = (actor: Pick<Actor, 'roles' | 'wards'>, wardId: string): boolean =>
-  actor.roles.includes('lead') || actor.wards.some((ward) => ward.wardId === wardId);
+  (wardId !== '' && actor.roles.includes('lead')) || actor.wards.some((ward) => ward.wardId === wardId);
 
 export const isEntitled = (actor: Pick<Actor, 'wards'>, entitlement: Entitlement, wardId: string): boolean =>
   actor.wards.some((ward) => ward.wardId === wardId && ward.entitlements.includes(entitlement));

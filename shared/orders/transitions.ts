@@ -150,7 +150,8 @@ export const TRANSITIONS: Readonly<Record<Act, Transition>> = {
     notBy: ['author'],
     guards: ['on-ward', 'checking', 'nobody-else-holds-check', 'not-locked-in'],
   }),
-  slip: row(['disputed'], ['awaiting-check'], CHECKERS, {
+  // what was given goes back to waiting for its countersignature: it is never started
+  slip: row(['disputed'], ['awaiting-check', 'given'], CHECKERS, {
     notBy: ['author'],
     guards: ['on-ward', 'own-check', 'not-slipped-before'],
   }),
@@ -199,12 +200,12 @@ export const TRANSITIONS: Readonly<Record<Act, Transition>> = {
   replace: row(['running'], ['replaced'], []),
   countersign: row(['given'], ['countersigned'], CHECKERS, {
     notBy: ['giver'],
-    guards: ['on-ward', 'registered', 'checking'],
+    guards: ['on-ward', 'registered', 'checking', 'not-locked-in'],
     signature: 'countersignature',
     password: true,
   }),
   differ: row(['given'], ['disputed'], CHECKERS, {
     notBy: ['giver'],
-    guards: ['on-ward', 'registered', 'checking'],
+    guards: ['on-ward', 'registered', 'checking', 'not-locked-in'],
   }),
 };

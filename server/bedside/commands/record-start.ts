@@ -20,14 +20,7 @@ import { findWitness, type Witness } from '../find-witness';
 import { loadBedside, type Bedside } from '../load-bedside';
 import { judgeWeight } from '../judge-weight';
 import { judgeConnected, replaceOlder } from '../replace-older';
-
-export type RecordStart = {
-  versionId: string;
-  entries: BedsideEntries;
-  /** A login whose password was verified before this transaction; null where nobody witnessed. */
-  witnessLogin: string | null;
-  replacesVersionId: string | null;
-};
+import type { RecordStart } from '../start-request';
 
 /**
  * Records the start: all four comparisons again with the child held, the weight still the one the order was made
@@ -43,6 +36,13 @@ export async function recordStart(
   const opened = await holdFor(tx, { act: 'start', actor, versionId, entry: 'infusion-started' }, now);
   if (!opened.ok) return opened.refusal;
   const version = opened.held;
+  // its state rules this out; the giving is one act and is never repeated by it
+  if (version.row.givenAt !== null) {
+    return refused('order-state', {
+      detail: 'This has been given already.',
+      entries: [noteOf('infusion-started', version)],
+    });
+  }
   const bedside = await loadBedside(tx, actor.hospitalId, versionId, now);
   const verdicts = compareAll(bedside.content, entries, bedside.context);
   const refusal =

@@ -3,6 +3,7 @@ import { readDecimal } from '@shared/decimal-input';
 import type { Instant } from '@shared/time';
 import { millilitres, type Millilitres } from '@shared/units';
 import { eq } from 'drizzle-orm';
+import { findChild } from '../../children/find-child';
 import { done, refused, type Outcome, type Refused } from '../../db/outcome';
 import { infusionEvents, infusions } from '../../db/schema/bedside';
 import { orderVersions } from '../../db/schema/orders';
@@ -13,7 +14,10 @@ import { INFUSED } from './stop';
 
 type Body = { versionId: string; reason: string; volumeInfusedMl: string | null };
 
-/** The reason of a stop, and what had gone in, told afterwards; the first ones stay beside it. */
+/**
+ * The reason of a stop, and what had gone in, told afterwards by the ward or by whoever stopped it; the first ones
+ * stay beside it. What went in counts in the child's totals, so it is not anybody's to say.
+ */
 export async function addStopReason(
   tx: Tx,
   actor: Actor,
@@ -25,6 +29,10 @@ export async function addStopReason(
   if (version === null || infusion === undefined) return NO_SUCH_ORDER;
   if (infusion.endedHow !== 'stopped') {
     return refused('order-state', { detail: 'This infusion was not stopped.' });
+  }
+  const onWard = await findChild(tx, actor, 'read-child', version.row.childId);
+  if (!onWard.ok && infusion.endedBy !== actor.id) {
+    return { ...onWard, entries: [noteOf('infusion-stop-reason', version)] };
   }
   const read = readVolume(volumeInfusedMl);
   if (!read.ok) return read.refusal;

@@ -23,17 +23,21 @@ export async function slip(
   const { row, ward } = version;
   const checkDueAt = checkDue(row.urgency, (await rulebookInForce(tx)).rulebook, now);
   await writeCheck(tx, version, actor.id, { state: 'slip', decidedAt: now, reason }, now);
-  await moveVersion(tx, versionId, 'awaiting-check', now, { askedChecker: null, checkDueAt });
+  const isGiven = row.givenAt !== null;
+  const to = isGiven ? 'given' : 'awaiting-check';
+  await moveVersion(tx, versionId, to, now, { askedChecker: null, checkDueAt });
   const others = ward === null ? [] : await findCheckers(tx, { ...row, versionId, wardId: ward.id });
   return done(
     { ok: true },
     {
-      entries: [noteOf('check-slip', version, { from: 'disputed', to: 'awaiting-check', reason })],
+      entries: [noteOf('check-slip', version, { from: 'disputed', to, reason })],
       // an emergency is asked by word of mouth: mail comes too late
       mails:
-        row.urgency === 'emergency'
+        row.urgency === 'emergency' && !isGiven
           ? []
-          : others.map(({ id }) => mailTo('check-asked', id, version, checkDueAt)),
+          : others.map(({ id }) =>
+              mailTo(isGiven ? 'countersign-asked' : 'check-asked', id, version, checkDueAt),
+            ),
     },
   );
 }

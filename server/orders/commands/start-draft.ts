@@ -12,6 +12,7 @@ import { done, refused, type Outcome } from '../../db/outcome';
 import { drafts, orders, orderVersions } from '../../db/schema/orders';
 import type { Tx } from '../../db/transaction';
 import { loadContext } from '../load-context';
+import { followedIsReplaced } from '../work-out-version';
 import { makeCode } from './make-code';
 
 export type StartDraft = { childId: string; kind: Kind; followsOrderId: string | null };
@@ -30,7 +31,7 @@ export async function startDraft(
   if (followed === undefined) {
     return refused('not-found', { detail: 'The order to follow is not one of this child.' });
   }
-  const except = followsOrderId === null ? [] : [followsOrderId];
+  const except = followsOrderId !== null && followedIsReplaced(kind) ? [followsOrderId] : [];
   const loaded = await loadContext(tx, { hospitalId: actor.hospitalId, childId, except }, now);
   if (loaded === null) return refused('not-found');
   const { context } = loaded;
