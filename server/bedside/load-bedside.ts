@@ -1,4 +1,4 @@
-import type { BedsideContext } from '@shared/bedside/compare';
+import type { BedsideContext } from '@shared/bedside/finding';
 import { fluidOf } from '@shared/orders/chart-facts';
 import type { OrderContent } from '@shared/orders/content';
 import type { Product } from '@shared/routes/orders';

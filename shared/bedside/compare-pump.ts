@@ -2,7 +2,7 @@ import { readDecimal } from '../decimal-input';
 import type { OrderContent } from '../orders/content';
 import { above, formatNumber, snap } from '../rounding';
 import type { BedsideEntries } from '../routes/bedside';
-import type { BedsideContext, Finding } from './compare';
+import type { BedsideContext, Finding } from './finding';
 import { volumeToInfuse } from './volume-to-infuse';
 
 type Setting = { context: BedsideContext; bagMl: number | null };

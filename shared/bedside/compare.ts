@@ -2,23 +2,10 @@ import type { FluidComposition } from '../calc/types';
 import { readDecimal } from '../decimal-input';
 import type { OrderContent } from '../orders/content';
 import type { BedsideEntries, BedsideStep, StepVerdict } from '../routes/bedside';
-import type { Rulebook } from '../rulebook/document';
-import { civilDate, formatCivilDate, isCivilDate, type Instant } from '../time';
+import { civilDate, formatCivilDate, isCivilDate } from '../time';
 import { comparePumpFigures } from './compare-pump';
+import { finding, type BedsideContext, type Finding } from './finding';
 import { potassiumFinding } from './same-bag';
-
-/** What the bedside is held against beside the signed content. */
-export type BedsideContext = {
-  at: Instant;
-  zone: string;
-  rulebook: Rulebook;
-  products: readonly FluidComposition[];
-  /** mL of this order given already. */
-  infusedMl: number;
-};
-
-export type Finding = StepVerdict['findings'][number];
-export const finding = (field: string, code: string, text: string): Finding => ({ field, code, text });
 
 const verdict = (step: BedsideStep, findings: Finding[]): StepVerdict => ({
   step,

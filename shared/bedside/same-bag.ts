@@ -1,6 +1,6 @@
 import type { FluidComposition } from '../calc/types';
 import { snap } from '../rounding';
-import type { Finding } from './compare';
+import type { Finding } from './finding';
 
 const mmol = (n: number): string => `${n} mmol/L`;
 

@@ -1,7 +1,7 @@
 import type { OrderContent } from '../orders/content';
 import { formatNumber, snap } from '../rounding';
 import { ruleValues } from '../rulebook/read';
-import type { BedsideContext } from './compare';
+import type { BedsideContext } from './finding';
 import { isNewbornNow } from './newborn';
 
 /** The most that may be set as volume to be infused, mL, and why. */

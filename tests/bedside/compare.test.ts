@@ -1,11 +1,5 @@
-import {
-  compareAll,
-  compareBag,
-  compareChild,
-  compareLine,
-  comparePump,
-  type BedsideContext,
-} from '@shared/bedside/compare';
+import { compareAll, compareBag, compareChild, compareLine, comparePump } from '@shared/bedside/compare';
+import type { BedsideContext } from '@shared/bedside/finding';
 import { volumeToInfuse } from '@shared/bedside/volume-to-infuse';
 import type { OrderContent } from '@shared/orders/content';
 import type { BedsideEntries, StepVerdict } from '@shared/routes/bedside';
