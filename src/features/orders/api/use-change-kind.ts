@@ -4,22 +4,21 @@ import { call } from '@/lib/api';
 import type { Kind } from '@shared/calc/types';
 import { ORDER_FORM_FIELDS, type OrderForm } from '@shared/orders/form';
 import type { Draft } from '@shared/routes/orders';
-import { permittedProducts } from '../forms/fluid-choice';
 import type { DraftSaver } from './draft-saver';
 
-/** What was typed goes along; what the other kind needs and was never typed comes from its own proposals. */
+/** What was typed goes along; the times, the fluid and what was never typed come from the other kind's proposals. */
 export function formOfOtherKind(former: OrderForm, fresh: Draft): OrderForm {
   const entries = ORDER_FORM_FIELDS.map((field) => [field, former[field] || fresh.form[field]]);
   const merged = { ...(Object.fromEntries(entries) as OrderForm), limitReasons: former.limitReasons };
-  const isPermitted = permittedProducts(fresh.context, fresh.form.kind).some(
-    ({ id }) => id === former.productId,
-  );
   return {
     ...merged,
     kind: fresh.form.kind,
     urgency: fresh.form.urgency,
     plannedStart: fresh.form.plannedStart,
-    productId: isPermitted ? former.productId : fresh.form.productId,
+    reviewBy: fresh.form.reviewBy,
+    bloodsBy: fresh.form.bloodsBy,
+    // one kind's fluid is not meant for the other, even where the shelf permits it
+    productId: fresh.form.productId,
   };
 }
 

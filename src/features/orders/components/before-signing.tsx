@@ -26,6 +26,14 @@ const latestFor = (exceptions: readonly Exception[], code: string): Exception | 
 const isGranted = (exception: Exception | undefined): boolean =>
   exception !== undefined && EXCEPTION_WORDS[exception.state] === EXCEPTION_WORDS.granted;
 
+/** Every one of these matters has been put to a senior who has not answered yet. */
+export const areAsked = (limits: readonly LimitFinding[], exceptions: readonly Exception[]): boolean =>
+  limits.length > 0 &&
+  limits.every(({ code }) => {
+    const latest = latestFor(exceptions, code);
+    return latest !== undefined && EXCEPTION_WORDS[latest.state] === EXCEPTION_WORDS.asked;
+  });
+
 /** Senior matters that no senior has agreed to yet. */
 export const openSeniors = (work: WorkedOutDraft, exceptions: readonly Exception[]): LimitFinding[] =>
   work.seniors.filter(({ code }) => !isGranted(latestFor(exceptions, code)));

@@ -47,8 +47,8 @@ export function BesidePanel({ versionId, onClose }: { versionId: string; onClose
       }
     >
       <p>
-        Hand the device to your colleague. They sign in for this one check, for ten minutes, and see none of
-        your figures. Your own session rests until they are done.
+        Your figures are off the screen now. Hand the device to your colleague: they sign in for this one
+        check, and your own session rests until they are done.
       </p>
       {trouble && <Refusal title="The check was not opened.">{trouble}</Refusal>}
       <Row>

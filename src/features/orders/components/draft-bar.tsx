@@ -21,6 +21,8 @@ export type BarActs = {
 type DraftBarProps = BarActs & {
   work: DraftWork;
   seniors: readonly LimitFinding[];
+  /** A senior has been asked and has not answered. */
+  isSeniorAsked: boolean;
   status: SaveStatus;
   zone: string;
   /** A panel is open above: its own buttons act. */
@@ -86,7 +88,7 @@ function OverBar({
   );
 }
 
-function SignButton({ work, seniors, onSign, onAskSenior, onMissing }: DraftBarProps) {
+function SignButton({ work, seniors, isSeniorAsked, onSign, onAskSenior, onMissing }: DraftBarProps) {
   const missing = missingWords(work);
   if (missing !== undefined) {
     return (
@@ -100,8 +102,8 @@ function SignButton({ work, seniors, onSign, onAskSenior, onMissing }: DraftBarP
   }
   if (seniors.length > 0) {
     return (
-      <Button kind="primary" glyph="senior" onClick={onAskSenior}>
-        Ask a senior to agree
+      <Button kind={isSeniorAsked ? 'secondary' : 'primary'} glyph="senior" onClick={onAskSenior}>
+        {isSeniorAsked ? 'Ask again, or by telephone' : 'Ask a senior to agree'}
       </Button>
     );
   }
@@ -114,14 +116,19 @@ function SignButton({ work, seniors, onSign, onAskSenior, onMissing }: DraftBarP
 
 /** Where the draft stands and what can be done with it. Over a brim there is no sign button. */
 export function DraftBar(props: DraftBarProps) {
-  const { work, seniors, status, zone, isPanelOpen, onDiscard, onKeep } = props;
+  const { work, seniors, isSeniorAsked, status, zone, isPanelOpen, onDiscard, onKeep } = props;
   if ('workOut' in work && work.brims.length > 0 && status.words === '')
     return <OverBar {...props} brims={work.brims} />;
   const isOver = 'workOut' in work && work.brims.length > 0;
   const says =
     seniors.length > 0 ? (
       <>
-        <b>A senior has to agree before you sign:</b> {inSentence(seniors[0]?.title ?? '')}.
+        <b>
+          {isSeniorAsked
+            ? 'A senior has been asked and has not answered yet:'
+            : 'A senior has to agree before you sign:'}
+        </b>{' '}
+        {inSentence(seniors[0]?.title ?? '')}.
       </>
     ) : (
       <>

@@ -17,7 +17,7 @@ import { offeredEntries, type Offer } from '../forms/apply-offer';
 import { DraftFormProvider, type DraftForm } from '../forms/draft-form';
 import { focusField } from '../forms/order-words';
 import { useDraftFormValue } from '../forms/use-draft-form';
-import { openSeniors } from './before-signing';
+import { areAsked, openSeniors } from './before-signing';
 import { DiscardPanel } from './discard-panel';
 import { DraftBar } from './draft-bar';
 import { DraftFormPage } from './draft-form-page';
@@ -171,6 +171,7 @@ export function DraftBook({ draft }: { draft: Draft }) {
       <DraftBar
         work={work}
         seniors={seniors}
+        isSeniorAsked={areAsked(seniors, exceptions)}
         status={status}
         zone={context.zone}
         isPanelOpen={isShown(panel, form) || status.theirs !== null || guard.isAsking}

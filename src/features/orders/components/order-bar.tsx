@@ -94,12 +94,22 @@ function NextOrderButton({ view }: { view: OrderView }) {
   );
 }
 
-type OrderBarProps = { view: OrderView; onOpened: (opened: OrderView) => void; onSettled: () => void };
+type OrderBarProps = {
+  view: OrderView;
+  /** The device goes to a checker, or comes back. */
+  onHanding: (isHanding: boolean) => void;
+  onOpened: (opened: OrderView) => void;
+  onSettled: () => void;
+};
 
 /** Where the order stands, and what the reader can do with it. */
-export function OrderBar({ view, onOpened, onSettled }: OrderBarProps) {
+export function OrderBar({ view, onHanding, onOpened, onSettled }: OrderBarProps) {
   const { versionId, state, open, you } = view;
-  const [panel, setPanel] = useState<OrderPanel>('none');
+  const [panel, setOnlyPanel] = useState<OrderPanel>('none');
+  const setPanel = (next: OrderPanel) => {
+    onHanding(next === 'beside');
+    setOnlyPanel(next);
+  };
   const standing = useOrderActs(view);
   const stop = useStop(versionId);
   const dispute = useOpenDispute(view, onOpened);

@@ -6,6 +6,7 @@ import { dayTime } from '../forms/order-words';
 
 /** What happened, in the order it happened; names are withheld while the version is covered. */
 export function Timeline({ rows, zone }: { rows: OrderView['timeline']; zone: string }) {
+  if (rows.length === 0) return null;
   return (
     <section className="sec">
       <h2>Timeline</h2>

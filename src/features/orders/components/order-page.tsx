@@ -15,11 +15,17 @@ import { OrderBar } from './order-bar';
 import { OrderCovered } from './order-covered';
 import { OrderOpen } from './order-open';
 
+/** The order as anyone may see it: no figures, no author, no timeline with names. */
+const withheld = (view: OrderView): OrderView => ({ ...view, open: null, timeline: [] });
+
 function Order({ read, readAt }: { read: OrderView; readAt: number }) {
   const { zone } = useKnownMe().hospital;
   // a dispute opened to settle it is in this page only: the next reading is covered again until it is settled
   const [opened, setOpened] = useState<OrderView | null>(null);
-  const view = opened !== null && read.open === null && isDisputed(read.state) ? opened : read;
+  // the device is being handed to a checker: nothing of the author's may be on the screen then
+  const [isHanding, setHanding] = useState(false);
+  const shown = opened !== null && read.open === null && isDisputed(read.state) ? opened : read;
+  const view = isHanding ? withheld(shown) : shown;
   const { open } = view;
   return (
     <>
@@ -31,7 +37,13 @@ function Order({ read, readAt }: { read: OrderView; readAt: number }) {
       ) : (
         <OrderOpen view={view} open={open} zone={zone} readAt={readAt} />
       )}
-      <OrderBar key={view.versionId} view={view} onOpened={setOpened} onSettled={() => setOpened(null)} />
+      <OrderBar
+        key={view.versionId}
+        view={view}
+        onHanding={setHanding}
+        onOpened={setOpened}
+        onSettled={() => setOpened(null)}
+      />
     </>
   );
 }
