@@ -18,5 +18,5 @@ export const limitMiss = (version: Subject, limit: LimitFinding): NearMiss => ({
   value: withUnit(limit.value, limit.unit),
   limit: withUnit(limit.limit, limit.unit),
   detail: limit.title,
-  dedupe: `limit:${version.id}:${limit.code}`,
+  dedupe: `${limit.strength}:${version.id}:${limit.code}`,
 });

@@ -145,17 +145,32 @@ describe('signing', () => {
     expect((await version(versionId)).state).toBe('draft');
   });
 
-  it('signs nothing when the figures are not those that were seen', async () => {
+  it.each([
+    ['rate', { rateMlPerH: '52.2' }],
+    ['volume', { volumeMl: '1251' }],
+    ['rulebook', { rulebook: 2 }],
+  ])('signs nothing when the %s is not the one that was seen', async (_what, change) => {
     const { versionId } = await draft(world, 'maintenance');
     const shown = await seen(world.as('doctor'), versionId);
-    const answer = await sign(world.as('doctor'), versionId, {
-      seen: { ...shown.seen, rateMlPerH: '52.2' },
-    });
+    const answer = await sign(world.as('doctor'), versionId, { seen: { ...shown.seen, ...change } });
     expect(answer.status).toBe(409);
     expect(answer.body.type).toContain('figures-moved');
     expect(answer.body.data.figures.rateMlPerH).toBe('52.1');
     expect((await version(versionId)).state).toBe('draft');
     expect((await ledgerOf(versionId)).at(-1)).toMatchObject({ act: 'order-signed', outcome: 'refused' });
+  });
+
+  it('signs nothing when a bolus charted meanwhile moved the total', async () => {
+    const childId = await world.addChild();
+    const { versionId } = await draft(world, 'bolus', { mlPerKg: '20' }, childId);
+    const shown = await seen(world.as('doctor'), versionId);
+    // 20 mL/kg in the ambulance, charted meanwhile: 40 mL/kg in 24 h is a senior's matter (NICE NG29)
+    await world.as('nurse').call(ROUTES.recordIntake, {
+      params: { id: childId },
+      body: { what: 'bolus', ml: '328', at: '2026-06-10T11:30', where: 'Ambulance' },
+    });
+    const answer = await sign(world.as('doctor'), versionId, shown);
+    expect(answer.body.type).toContain('exception-needed');
   });
 
   it('signs nothing from a window that is behind', async () => {
