@@ -8,7 +8,7 @@ import { FIELD_WORDS, fieldId, weightWords } from '../forms/order-words';
 export function WeightGroup({ versionId }: { versionId: string }) {
   const { values, context, register, errorOf } = useDraftForm();
   const chosen = context.weights.find(({ id }) => id === values.weightId);
-  const weigh = `/children/${context.child.id}?weigh=1&then=${encodeURIComponent(`/drafts/${versionId}`)}`;
+  const weigh = `/children/${context.child.id}?record=weight&back=${encodeURIComponent(`/drafts/${versionId}`)}`;
   const options = context.weights.map((weight) => ({
     value: weight.id,
     label: `${weightWords(weight, context.zone)}${weight.usable ? '' : ': a second measurement is owed'}`,
