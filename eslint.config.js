@@ -48,6 +48,7 @@ export default tseslint.config(
       'max-depth': ['error', 3],
       'max-params': ['error', 5],
       'no-restricted-syntax': ['error', ...bannedSyntax, stateSyntax],
+      'import-x/no-cycle': 'error',
       'import-x/no-restricted-paths': ['error', { zones, basePath: import.meta.dirname }],
       '@typescript-eslint/consistent-type-imports': 'error',
       '@typescript-eslint/no-misused-promises': ['error', { checksVoidReturn: { attributes: false, arguments: false } }],
@@ -94,5 +95,6 @@ export default tseslint.config(
     },
   },
   { files: ['**/*.{js,mjs}'], languageOptions: { globals: globals.node } },
+  { files: ['src/public/**/*.js'], languageOptions: { globals: globals.browser } },
   prettier,
 );
