@@ -1,6 +1,6 @@
 import react from '@vitejs/plugin-react';
 import { readFileSync, mkdtempSync, rmSync, writeFileSync } from 'node:fs';
-import { join } from 'node:path';
+import { join, resolve } from 'node:path';
 import { gzipSync } from 'node:zlib';
 import { build } from 'vite';
 import { round, tell } from './interleave';
@@ -47,7 +47,7 @@ createRoot(document.getElementById('root')).render(<QueryClientProvider client={
 
 /** A bare page with the same libraries, built the same way; bytes after gzip. */
 async function shellSize(): Promise<number> {
-  const folder = mkdtempSync(join('.state', 'shell-'));
+  const folder = mkdtempSync(resolve('.state', 'shell-'));
   try {
     writeFileSync(join(folder, 'main.tsx'), SHELL);
     const result = await build({

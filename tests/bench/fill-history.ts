@@ -22,13 +22,13 @@ async function makeTables(sql: Sql, wardId: string, orders: number): Promise<voi
     numbered as (
       select n, n <= ${OLD_ORDERS_ON_THE_WARD} * (select of from present limit 1) as on_ward
       from generate_series(1, ${orders}) n)
-    select n, gen_random_uuid() as order_id, gen_random_uuid() as version_id,
+    select o.n, gen_random_uuid() as order_id, gen_random_uuid() as version_id,
       coalesce(p.child_id, f.child_id) as child_id,
-      coalesce(f.came, now() - make_interval(hours => 24 + 12 * (n / p.of)::int)) as signed_at,
-      (array['finished', 'finished', 'finished', 'stopped', 'replaced', 'lapsed'])[1 + n % 6] as state
-    from numbered
-    left join present p on on_ward and p.place = n % p.of
-    left join former f on not on_ward and f.n = 1 + n % (select count(*) from former)`);
+      coalesce(f.came, now() - make_interval(hours => 24 + 12 * (o.n / p.of)::int)) as signed_at,
+      (array['finished', 'finished', 'finished', 'stopped', 'replaced', 'lapsed'])[1 + o.n % 6] as state
+    from numbered o
+    left join present p on on_ward and p.place = o.n % p.of
+    left join former f on not on_ward and f.n = 1 + o.n % (select count(*) from former)`);
 }
 
 async function copyChildren(sql: Sql, { child }: Proto): Promise<void> {
