@@ -121,6 +121,9 @@ export async function openException(
   );
 }
 
+/** States of a senior matter in which nothing is owed any more. */
+const OVER: readonly (typeof exceptions.$inferSelect)['state'][] = ['void', 'refused'];
+
 /** The senior's own signature on what was agreed by telephone, or on what an emergency could not wait for. */
 export async function countersignException(
   tx: Tx,
@@ -137,6 +140,12 @@ export async function countersignException(
   const [row] = await tx.select().from(exceptions).where(eq(exceptions.id, exceptionId)).for('update');
   if (row === undefined || row.countersignDueAt === null) return NO_SUCH_ORDER;
   const entry = noteOf('exception-countersigned', held);
+  if (OVER.includes(row.state)) {
+    return refused('conflict', {
+      detail: 'The order has changed since: nothing is owed here.',
+      entries: [entry],
+    });
+  }
   if (row.countersignedAt !== null) {
     return refused('conflict', { detail: 'This is countersigned already.', entries: [entry] });
   }

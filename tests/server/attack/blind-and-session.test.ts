@@ -166,6 +166,32 @@ describe('who has seen the figures', () => {
     expect(rows).toEqual([]);
   });
 
+  it('a matter that is void is not brought back by countersigning it', async () => {
+    const order = await makeOrder(world, childId, { kind: 'bolus', form: { urgency: 'emergency' } });
+    const now = world.clock.now();
+    const [row] = await world.within((tx) =>
+      tx
+        .insert(exceptions)
+        .values({
+          versionId: order.versionId,
+          authorId: world.people.doctor.id,
+          limitCode: 'bolus-again',
+          contentSha256: 'a'.repeat(64),
+          state: 'void',
+          askedAt: now,
+          countersignDueAt: now,
+        })
+        .returning(),
+    );
+    const params = { id: row!.id };
+    const signed = await world
+      .as('senior')
+      .call(ROUTES.countersignException, { params, body: { password: PASSWORD } });
+    expect(problem(signed)).toBe('/problems/conflict');
+    const [after] = await world.within((tx) => tx.select().from(exceptions));
+    expect(after).toMatchObject({ state: 'void', by: null });
+  });
+
   it('nobody decides or countersigns what was not asked, of another version, or twice', async () => {
     const draft = await makeDraft(world, childId);
     const body = { agree: true, contentSha256: 'a'.repeat(64), reason: 'all is well', password: PASSWORD };

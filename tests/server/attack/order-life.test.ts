@@ -47,15 +47,16 @@ const BY_SYRINGE = {
   bag: { productId: '' },
   pump: { device: '', channel: '', rate: '', volume: '164', minutes: '10' },
 };
+type StartChange = {
+  person?: PersonKey;
+  bolus?: boolean;
+  replaces?: string | null;
+  witness?: object | null;
+  key?: string;
+};
 async function start(
   versionId: string,
-  {
-    person = 'nurse',
-    bolus = false,
-    replaces = null as string | null,
-    witness = null as object | null,
-    key = undefined as string | undefined,
-  } = {},
+  { person = 'nurse', bolus = false, replaces = null, witness = null, key }: StartChange = {},
 ) {
   const number = await numberOf();
   const change = bolus ? { ...BY_SYRINGE, bag: { productId: world.products[SALINE]! } } : {};
