@@ -47,7 +47,7 @@ function useWhoSaidSo(wardId: string | undefined) {
   const me = useKnownMe();
   const { data: people = [] } = useColleagues(wardId);
   const self = me.account.roles.includes('prescriber')
-    ? [{ value: me.account.id, label: `${me.account.name}, myself` }]
+    ? [{ value: me.account.id, label: `${me.account.name}, ${me.account.title}` }]
     : [];
   const others = people
     .filter(({ roles }) => roles.includes('prescriber'))
@@ -76,6 +76,7 @@ function useGiven(chart: Chart) {
   const [trouble, setTrouble] = useState('');
   const send = async () => {
     setTrouble('');
+    rhf.clearErrors();
     const form = rhf.getValues();
     const faults = Object.entries(givenFaults(form));
     faults.forEach(([field, message], index) =>
@@ -191,7 +192,7 @@ function Given({ chart }: { chart: Chart }) {
   const { data: fluids = [] } = useBolusFluids();
   const people = useWhoSaidSo(chart.child.ward?.id);
   const weight = chart.weights.find(({ id }) => id === (values.weightId || chart.dosingWeightId));
-  const labelOf = (options: { value: string; label: string }[], value: string) =>
+  const labelOf = (options: Option[], value: string) =>
     options.find((option) => option.value === value)?.label;
   const spoken = givenReadBack({
     form: values,

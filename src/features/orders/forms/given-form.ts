@@ -89,7 +89,7 @@ export function givenReadBack({ form, fluid, by }: Spoken): string | undefined {
     gravity: 'by gravity',
   };
   return (
-    `Given: ${formatNumber(volume.value, 1)} millilitres of ${fluid} over ${formatNumber(over.value, 0)} minutes, ` +
+    `Given: ${formatNumber(volume.value, 1)} millilitres of ${fluid.charAt(0).toLowerCase()}${fluid.slice(1)} over ${formatNumber(over.value, 0)} minutes, ` +
     `${ways[route]}, on the word of ${by}.`
   );
 }
