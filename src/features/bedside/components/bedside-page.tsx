@@ -46,13 +46,9 @@ function Bedside({ page, isStale }: { page: Page; isStale: boolean }) {
   const isOffline = useOfflineSince() !== null;
   const mayStart = page.acts.some(({ act, allowed }) => act === 'start' && allowed);
   const { child, content } = page;
-  const place = [child.ward && `${child.ward.name} ward`, child.bed && `bed ${child.bed}`];
   return (
     <div className="bed flex grow flex-col">
-      <ChildStrip child={child} weight={content.weight}>
-        <span className="soft">{place.filter(Boolean).join(', ')}</span>
-        <Link to={`/orders/${page.versionId}`}>Order</Link>
-      </ChildStrip>
+      <ChildStrip child={child} weight={content.weight} />
       <DoseHead page={page} bagSize={work.entries.bag.sizeMl} isStale={isStale} />
       {stopping.stopped ? (
         <StoppedView page={page} stopping={stopping} />

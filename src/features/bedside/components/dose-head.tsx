@@ -1,8 +1,8 @@
+import { Link } from 'react-router-dom';
 import { SmallGauge } from '@/components/gauge/small-gauge';
 import { Figure } from '@/components/ui/figure';
 import { StateWord } from '@/components/ui/state-word';
 import { shownFromContent } from '@/features/orders/forms/shown-order';
-import { potassiumWords } from '@shared/checks/words';
 import { isOnPump } from '@shared/orders/states';
 import type { BedsidePage } from '@shared/routes/bedside';
 import { lastingWords, signedWords } from '../forms/bedside-words';
@@ -26,6 +26,8 @@ export function DoseHead({
   const { content, state } = page;
   const shown = shownFromContent(content);
   const { figure, volume, over, gauge } = shown;
+  const { ward, bed } = page.child;
+  const place = [ward && `${ward.name} ward`, bed && `bed ${bed}`].filter(Boolean).join(', ');
   const potassium = Number(content.fluid.addedPotassium);
   return (
     <section className="dose" aria-label="The signed order">
@@ -34,7 +36,7 @@ export function DoseHead({
         <p>
           <b>{content.fluid.base}</b>
         </p>
-        {potassium > 0 && <p>with {potassiumWords(potassium).toLowerCase()}, ready mixed</p>}
+        {potassium > 0 && <p>with potassium chloride {potassium} mmol/L, ready mixed</p>}
         <div className="hgl">
           <SmallGauge
             value={gauge.orderMl}
@@ -54,6 +56,10 @@ export function DoseHead({
         {signedWords(page).map((line) => (
           <p key={line}>{line}</p>
         ))}
+        <p>
+          {place && `${place}. `}
+          <Link to={`/orders/${page.versionId}`}>Order {page.code}</Link>
+        </p>
       </div>
     </section>
   );

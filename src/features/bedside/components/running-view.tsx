@@ -9,7 +9,7 @@ import { useOrder } from '@/features/orders/api/use-order';
 import { Refusal } from '@/features/orders/components/refusal';
 import { STATE_WORDS, isOnPump } from '@shared/orders/states';
 import type { BedsidePage } from '@shared/routes/bedside';
-import { formatDayTime, formatTime, parseInstant } from '@shared/time';
+import { formatDayTime, parseInstant } from '@shared/time';
 import { rereadBedside } from '../api/use-bedside';
 import type { Stopping } from '../api/use-stop';
 import { ResumePanel } from './resume-panel';
@@ -102,7 +102,7 @@ export function RunningView({ page, stopping }: RunningViewProps) {
         {lapsesAt !== undefined && (
           <p className={lapsesAt < now ? 'font-semibold text-ochre' : 'soft'}>
             {lapsesAt < now ? 'Overdue: the order’s time ended at ' : 'The order’s time ends at '}
-            {formatTime(lapsesAt, page.zone)}.
+            {formatDayTime(lapsesAt, page.zone)}.
           </p>
         )}
         <AtTheBedside page={page} />

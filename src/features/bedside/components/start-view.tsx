@@ -101,7 +101,7 @@ function WitnessStep({ start }: { start: Start }) {
         title="Witness"
         how="another person"
         standing={isRefused ? 'refused' : 'now'}
-        says="A second person sees this bag, this pump and this line, and signs in here."
+        says="A second person, not the starter, sees bag, pump and line, and signs in here."
       >
         <div className="two">
           <TextField

@@ -28,7 +28,7 @@ export function ChildFields({ entries, verdict, enter, onLast }: FieldsProps<Bed
       <div className="two">
         <TextField
           id="bedside-number"
-          label="Hospital number on the wristband"
+          label="Hospital no. on the band"
           size="big"
           spellCheck={false}
           value={entries.number}
@@ -38,7 +38,7 @@ export function ChildFields({ entries, verdict, enter, onLast }: FieldsProps<Bed
         <DateTimeField
           id="bedside-bornOn"
           kind="date"
-          label="Date of birth on the wristband"
+          label="Date of birth on the band"
           className="big"
           value={entries.bornOn}
           onChange={typed(enter, 'bornOn')}
@@ -75,6 +75,8 @@ export function BagFields({ entries, verdict, enter, onLast, products, isHighRis
         size="big"
         placeholder="Choose"
         options={options}
+        // the box may be too narrow for a name, and two bags may differ in its last word
+        hint={products.find(({ id }) => id === entries.productId)?.name}
         value={entries.productId}
         onChange={typed(enter, 'productId')}
         error={findingOf(verdict, 'productId')}
@@ -204,6 +206,12 @@ export const LINE_WORDS: Readonly<Record<LineClass, string>> = {
   central: 'Central line',
   intraosseous: 'Intraosseous needle',
 };
+/** In the narrow box of a phone. */
+const LINE_SHORT: typeof LINE_WORDS = {
+  peripheral: 'Peripheral',
+  central: 'Central',
+  intraosseous: 'Intraosseous',
+};
 const SEEN = [
   ['traced', 'Traced from the bag through the pump to the cannula'],
   ['clampOpen', 'Clamp open'],
@@ -219,7 +227,7 @@ export function LineFields({ entries, verdict, enter, onLast }: FieldsProps<Beds
           label="Kind of line"
           size="big"
           placeholder="Choose"
-          options={LINE_CLASSES.map((value) => ({ value, label: LINE_WORDS[value] }))}
+          options={LINE_CLASSES.map((value) => ({ value, label: LINE_SHORT[value] }))}
           value={entries.lineClass}
           onChange={typed(enter, 'lineClass')}
           error={findingOf(verdict, 'lineClass')}

@@ -13,7 +13,10 @@ export function StopBar({ page, stopping }: { page: BedsidePage; stopping: Stopp
       <div>
         {failure ? (
           <Refusal title="Stop the pump by hand; not recorded.">
-            You touched Stop at {at}: write that time down. {failure.words}
+            You touched Stop at {at}: write that time down.{' '}
+            {failure.isSilent
+              ? 'The server did not answer. Try again: it is recorded once at most.'
+              : failure.words}
           </Refusal>
         ) : (
           <>
@@ -26,7 +29,7 @@ export function StopBar({ page, stopping }: { page: BedsidePage; stopping: Stopp
         id="stop"
         kind="stop"
         glyph="stopped"
-        className="min-h-[72px]"
+        className="min-h-[72px] w-full text-lead"
         busy={isSending}
         busyLabel="Recording the stop"
         onClick={send}

@@ -77,7 +77,7 @@ export function StoppedView({ page, stopping }: { page: BedsidePage; stopping: S
   const at = parseInstant(stopped?.stoppedAt ?? '');
   return (
     <main className="steps py-s4" id="main" tabIndex={-1}>
-      <h1 ref={heading} tabIndex={-1} className="text-form font-bold outline-none" role="status">
+      <h1 ref={heading} tabIndex={-1} className="text-form font-bold outline-none">
         {stopped && at !== undefined
           ? `Stopped at ${formatTime(at, page.zone)}, recorded by ${stopped.stoppedBy}`
           : 'Stopped'}

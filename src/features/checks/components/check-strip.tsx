@@ -15,7 +15,7 @@ function weightOf({ uncovered, zone }: CheckPage) {
   const agrees = uncovered.comparison.rows.find(({ field }) => field === 'weightKg')?.agrees ?? true;
   return {
     text: kgText(Number(kg)),
-    how: agrees ? `${when}${METHOD_WORDS[method]}` : `${when}as ordered; yours differs`,
+    how: agrees ? `${when}${METHOD_WORDS[method]}` : 'as ordered, not yours',
   };
 }
 

@@ -1,7 +1,7 @@
 import { Figure, figureParts } from '@/components/ui/figure';
 import { Glyph } from '@/components/ui/glyph';
 import type { ComparedRow, Comparison } from '@shared/checks/form';
-import { causeOf, figureOf, isQuiet, shownRows } from '../forms/compare-words';
+import { arithmeticHolds, causeOf, figureOf, shownRows } from '../forms/compare-words';
 
 export type Side = { name: string; note: string };
 
@@ -33,6 +33,9 @@ function Verdict({ row, isCause }: { row: ComparedRow; isCause: boolean }) {
   );
 }
 
+/** What agrees keeps low, so that what differs is in view. */
+const QUIET_ROW = 'mid:[&>*]:py-[7px]';
+
 type CompareTableProps = { comparison: Comparison; author: Side; checker: Side };
 
 /** Both sets side by side, frozen. The program never says who is right. */
@@ -62,7 +65,7 @@ export function CompareTable({ comparison, author, checker }: CompareTableProps)
         </thead>
         <tbody>
           {shownRows(comparison).map((row) => (
-            <tr key={row.field} className={row.agrees ? undefined : 'diff'}>
+            <tr key={row.field} className={row.agrees ? QUIET_ROW : 'diff'}>
               <th scope="row">{row.label}</th>
               <td className="pp">
                 <Value text={row.author} row={row} tone="tide" />
@@ -77,7 +80,7 @@ export function CompareTable({ comparison, author, checker }: CompareTableProps)
           ))}
         </tbody>
       </table>
-      {comparison.rows.some(isQuiet) && (
+      {arithmeticHolds(comparison) && (
         <p className="note pt-s2 pl-s3">
           Worked out again on your weight: each set follows from its own entries.
         </p>

@@ -10,6 +10,7 @@ import type { CheckPage } from '@shared/routes/checks';
 import { verdictOf, type CheckSource } from '../api/check-source';
 import { checkRows } from '../forms/check-rows';
 import { useCheckForm } from '../forms/use-check-form';
+import { FootPanel } from './foot-panel';
 import { HandOnPanel } from './hand-on-panel';
 import { LockInPanel } from './lock-in-panel';
 import { MaySee } from './may-see';
@@ -83,26 +84,34 @@ export function CoveredView({ source, page, onEnded, onUncovered }: CoveredViewP
         <MovedFigures page={page} check={check} theirs={check.status.theirs} />
       )}
       {panel === 'lock-in' && (
-        <LockInPanel
-          {...{ source, check, onUncovered }}
-          onWrongChild={(words) => {
-            setWrongChild(words);
-            close();
-          }}
-          onFault={close}
-          onClose={close}
-        />
+        <FootPanel>
+          <LockInPanel
+            {...{ source, check, onUncovered }}
+            onWrongChild={(words) => {
+              setWrongChild(words);
+              close();
+            }}
+            onFault={close}
+            onClose={close}
+          />
+        </FootPanel>
       )}
       {panel === 'hand-on' && source.via === 'own' && (
-        <HandOnPanel
-          page={page}
-          versionId={source.versionId}
-          onClose={close}
-          onDone={() => onEnded('handed-on')}
-        />
+        <FootPanel>
+          {' '}
+          <HandOnPanel
+            page={page}
+            versionId={source.versionId}
+            onClose={close}
+            onDone={() => onEnded('handed-on')}
+          />
+        </FootPanel>
       )}
       {panel === 'return' && source.via === 'own' && (
-        <ReturnPanel versionId={source.versionId} onClose={close} onDone={() => onEnded('returned')} />
+        <FootPanel>
+          {' '}
+          <ReturnPanel versionId={source.versionId} onClose={close} onDone={() => onEnded('returned')} />
+        </FootPanel>
       )}
       {panel === null && (
         <BottomBar
@@ -111,9 +120,11 @@ export function CoveredView({ source, page, onEnded, onUncovered }: CoveredViewP
           say={
             <>
               <b>Nobody can show you the other figures first.</b>{' '}
-              {isOwn
-                ? 'If you have already seen them, hand the check to someone else.'
-                : 'If you have already seen them, close this page without locking in.'}
+              <span className="max-wide:hidden">
+                {isOwn
+                  ? 'If you have already seen them, hand the check to someone else.'
+                  : 'If you have already seen them, close this page without locking in.'}
+              </span>
               {lockInShut && (
                 <span className="block" id="lock-in-shut">
                   {lockInShut}

@@ -45,7 +45,6 @@ export function HandOnPanel({ page, versionId, onClose, onDone }: HandOnPanelPro
     <InlinePanel
       title="Hand this check to someone else"
       tone="plum"
-      aboveBar
       onClose={onClose}
       actions={
         <Button kind="plum" busy={passOn.isPending} busyLabel="Handing on, please wait" onClick={send}>

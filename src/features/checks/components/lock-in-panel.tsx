@@ -14,6 +14,8 @@ import { kgText } from '@shared/weights/chart-weight';
 import { useCheckActs, type CheckSource } from '../api/check-source';
 import type { CheckFormState } from '../forms/use-check-form';
 
+const lower = (text: string): string => text.charAt(0).toLowerCase() + text.slice(1);
+
 /** The figures about to be fixed, in one sentence. */
 export function ownWords({ kg, order }: CheckEntries): string {
   const n = (value: number) => formatNumber(value, 1);
@@ -23,8 +25,8 @@ export function ownWords({ kg, order }: CheckEntries): string {
   const { rate, volume, hours, base, addedPotassium, fraction, method } = order;
   const intake = order.feeds + order.drugs;
   return [
-    `${n(rate)} mL/h, ${n(volume)} mL over ${n(hours)} h, of ${base}, ${potassiumWords(addedPotassium).toLowerCase()}.`,
-    `For ${kgText(kg)}: ${METHOD_WORDS[method].toLowerCase()}, ${FRACTION_WORDS[fraction].toLowerCase()}, ${n(intake)} mL of other intake.`,
+    `${n(rate)} mL/h, ${n(volume)} mL over ${n(hours)} h, of ${base}, ${lower(potassiumWords(addedPotassium))}.`,
+    `For ${kgText(kg)}: ${lower(METHOD_WORDS[method])}, ${lower(FRACTION_WORDS[fraction])}, ${n(intake)} mL of other intake.`,
   ].join(' ');
 }
 
@@ -64,7 +66,6 @@ export function LockInPanel(props: LockInPanelProps) {
     <InlinePanel
       title="Lock in these figures?"
       tone="plum"
-      aboveBar
       onClose={onClose}
       closeLabel="Look at them again"
       actions={

@@ -9,20 +9,26 @@ import { WorkedOut } from './worked-out';
 
 const WIDTHS: Partial<Record<CheckFormField, string>> = { weightKg: 'fixw' };
 const FOUR = 'grid grid-cols-[62px_minmax(0,1fr)_54px_90px] gap-s2';
+/** Messages need more room than the fields. */
+const TWO_BY_TWO = 'grid grid-cols-2 gap-s2';
 
 type RowProps = { row: CheckRow; check: CheckFormState; products: CheckPage['products']; trouble?: string };
 
 function Row({ row, check, products, trouble }: RowProps) {
   const isSeveral = row.entries.length > 1;
+  const isMarked = row.entries.some(({ field }) => check.errorOf(field) !== undefined);
   const showsLabels = row.entries.length > 2 || row.key === 'intake' || row.key === 'method';
   return (
-    <div className={row.isTall ? 'ln tall' : 'ln'} role="group" aria-labelledby={`row-${row.key}`}>
+    <div
+      className={row.isTall ? 'ln tall' : 'ln'}
+      {...(isSeveral && { role: 'group', 'aria-labelledby': `row-${row.key}` })}
+    >
       <span className="k" id={`row-${row.key}`}>
         {row.head}
         {row.note && <small>{row.note}</small>}
       </span>
-      <div>
-        <div className={row.key === 'child' ? FOUR : isSeveral ? 'two' : undefined}>
+      <div className={row.key === 'workedOutBy' ? 'py-s2' : undefined}>
+        <div className={row.key === 'child' ? (isMarked ? TWO_BY_TWO : FOUR) : isSeveral ? 'two' : undefined}>
           {row.entries.map((entry) => (
             <EntryField
               key={entry.field}

@@ -41,11 +41,15 @@ function Due({ row, zone }: { row: QueueRow; zone: string }) {
   );
 }
 
+/** The head of a row reads as a cell, and takes a line of its own on a phone. */
+const NAME_CELL =
+  'border-rule align-top text-base font-normal text-ink max-mid:block max-mid:border-0 max-mid:pb-0';
+
 function Row({ row, zone }: { row: QueueRow; zone: string }) {
   const { child, barred } = row;
   return (
     <tr>
-      <th scope="row" className="nmc">
+      <th scope="row" className={NAME_CELL}>
         <Link to={hrefOf(row)}>
           <b>{child.surname},</b> {child.given}
         </Link>

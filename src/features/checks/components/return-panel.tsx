@@ -35,7 +35,6 @@ export function ReturnPanel({ versionId, onClose, onDone }: ReturnPanelProps) {
     <InlinePanel
       title="Cannot verify: return to the prescriber"
       tone="ochre"
-      aboveBar
       onClose={onClose}
       actions={
         <Button

@@ -25,7 +25,6 @@ export function SlipPanel({ versionId, onClose, onDone }: SlipPanelProps) {
     <InlinePanel
       title="I made a slip"
       tone="plum"
-      aboveBar
       onClose={onClose}
       actions={
         <Button kind="plum" busy={slip.isPending} busyLabel="Passing on, please wait" onClick={send}>

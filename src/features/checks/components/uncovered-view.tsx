@@ -4,6 +4,7 @@ import { CoverPanel } from '@/components/covered/cover-panel';
 import { BottomBar } from '@/components/ui/bottom-bar';
 import { Button, buttonClass } from '@/components/ui/button';
 import { GlyphWord, StateWord } from '@/components/ui/state-word';
+import type { Comparison } from '@shared/checks/form';
 import type { CheckPage } from '@shared/routes/checks';
 import { isDisputed } from '@shared/orders/states';
 import { verdictOf, type CheckSource } from '../api/check-source';
@@ -11,6 +12,7 @@ import { headline, ledeOf } from '../forms/compare-words';
 import { dayTime } from '../forms/chart-words';
 import { CompareTable } from './compare-table';
 import type { EndedBy } from './covered-view';
+import { FootPanel } from './foot-panel';
 import { GaugePair } from './gauge-pair';
 import { SignBar, SignSection, useSigning } from './sign-section';
 import { SlipPanel } from './slip-panel';
@@ -28,6 +30,21 @@ function Uncovering({ lifts, children }: { lifts: boolean; children: ReactNode }
   const [isLifted, setLifted] = useState(!lifts);
   useLayoutEffect(() => setLifted(true), []);
   return <CoverPanel isLifted={isLifted}>{children}</CoverPanel>;
+}
+
+type OutcomeProps = { comparison: Comparison; takesFocus: boolean };
+
+/** The page's first words; it exists only once the cover is off, and then takes the focus. */
+function Outcome({ comparison, takesFocus }: OutcomeProps) {
+  const heading = useRef<HTMLHeadingElement>(null);
+  useEffect(() => {
+    if (takesFocus) heading.current?.focus();
+  }, [takesFocus]);
+  return (
+    <h1 id="outcome" ref={heading} tabIndex={-1} className="outline-none">
+      {headline(comparison)}
+    </h1>
+  );
 }
 
 function WhoSettles() {
@@ -101,12 +118,8 @@ function RestingBar({ source, page, onSlip }: FootProps) {
 
 /** After lock-in: both sets, frozen, side by side; then sign, accept, return, or leave it to who settles. */
 export function UncoveredView({ source, page, lifts, onEnded }: UncoveredViewProps) {
-  const heading = useRef<HTMLHeadingElement>(null);
   const [isSlipOpen, setSlipOpen] = useState(false);
   const signing = useSigning(source, page, onEnded);
-  useEffect(() => {
-    if (lifts) heading.current?.focus();
-  }, [lifts]);
   const { uncovered, zone } = page;
   if (uncovered === null) return null;
   const { comparison, author, checkerName, lockedInAt } = uncovered;
@@ -117,9 +130,7 @@ export function UncoveredView({ source, page, lifts, onEnded }: UncoveredViewPro
         <Uncovering lifts={lifts}>
           <div className="mm">
             <section className="l" aria-labelledby="outcome">
-              <h1 id="outcome" ref={heading} tabIndex={-1} className="outline-none">
-                {headline(comparison)}
-              </h1>
+              <Outcome comparison={comparison} takesFocus={lifts} />
               <p className="lede">{ledeOf(comparison)}</p>
               <CompareTable
                 comparison={comparison}
@@ -131,7 +142,7 @@ export function UncoveredView({ source, page, lifts, onEnded }: UncoveredViewPro
               />
             </section>
             <section className="rgt" aria-label="Drawn, and what comes next">
-              <GaugePair page={page} />
+              <GaugePair page={page} isLow={canSign} />
               {comparison.effect && (
                 <section className="sec">
                   <h2>What the difference comes to</h2>
@@ -145,17 +156,17 @@ export function UncoveredView({ source, page, lifts, onEnded }: UncoveredViewPro
         </Uncovering>
       </main>
       {isSlipOpen && source.via === 'own' && (
-        <SlipPanel
-          versionId={source.versionId}
-          onClose={() => setSlipOpen(false)}
-          onDone={() => onEnded('slip')}
-        />
+        <FootPanel>
+          {' '}
+          <SlipPanel
+            versionId={source.versionId}
+            onClose={() => setSlipOpen(false)}
+            onDone={() => onEnded('slip')}
+          />
+        </FootPanel>
       )}
-      {canSign ? (
-        <SignBar {...{ source, page, signing }} />
-      ) : (
-        <RestingBar {...{ source, page }} onSlip={() => setSlipOpen(true)} />
-      )}
+      {canSign && <SignBar {...{ source, page, signing }} />}
+      {!canSign && !isSlipOpen && <RestingBar {...{ source, page }} onSlip={() => setSlipOpen(true)} />}
     </>
   );
 }

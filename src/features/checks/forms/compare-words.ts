@@ -2,7 +2,12 @@ import type { ComparedRow, Comparison } from '@shared/checks/form';
 
 /** Rows that only say that a set's own arithmetic holds: told in one line while it does. */
 const ARITHMETIC = new Set(['author-arithmetic', 'own-arithmetic']);
-export const isQuiet = ({ field, agrees }: ComparedRow): boolean => agrees && ARITHMETIC.has(field);
+const isArithmetic = ({ field }: ComparedRow): boolean => ARITHMETIC.has(field);
+const isQuiet = (row: ComparedRow): boolean => row.agrees && isArithmetic(row);
+
+/** Whether each set was worked out again and follows from its own entries. */
+export const arithmeticHolds = ({ rows }: Comparison): boolean =>
+  rows.some(isArithmetic) && rows.filter(isArithmetic).every(({ agrees }) => agrees);
 
 /** Agreeing rows first, then those that differ, each in the order of the page. */
 export function shownRows({ rows }: Comparison): ComparedRow[] {
@@ -11,6 +16,13 @@ export function shownRows({ rows }: Comparison): ComparedRow[] {
 }
 
 const differing = ({ rows }: Comparison): ComparedRow[] => rows.filter(({ agrees }) => !agrees);
+
+/** Another weight or intake moves the arithmetic with it: then that is not a difference of its own. */
+function named(comparison: Comparison): ComparedRow[] {
+  const differ = differing(comparison);
+  const hasCause = differ.some(({ field }) => field === 'weightKg' || field === 'intake');
+  return hasCause ? differ.filter((row) => !isArithmetic(row)) : differ;
+}
 
 /** The one choice or fact that everything else follows from, where there is just one. */
 export function causeOf(comparison: Comparison): string | null {
@@ -46,7 +58,7 @@ export function headline(comparison: Comparison): string {
 export function ledeOf(comparison: Comparison): string {
   if (comparison.outcome === 'agreed')
     return 'Every fact and every choice is the same, within the tolerance.';
-  const differ = differing(comparison);
+  const differ = named(comparison);
   const names = (follows: boolean) =>
     listed(
       differ.filter(({ nature }) => (nature === 'follows') === follows).map(({ label }) => lower(label)),

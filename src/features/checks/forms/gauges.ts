@@ -5,7 +5,7 @@ import type { GaugeInput } from '@shared/gauge/input';
 import { formatNumber } from '@shared/rounding';
 import type { CheckPage } from '@shared/routes/checks';
 import { parseInstant } from '@shared/time';
-import type { GaugeFigures } from '@shared/calc/types';
+import type { GaugeFigures, OrderInputs } from '@shared/calc/types';
 import type { OrderContent } from '@shared/orders/content';
 
 /** One set of figures as it is drawn: the vessel, and the last sums that led to it. */
@@ -55,11 +55,16 @@ export function checkersSet(page: CheckPage, { yours, content }: Uncovered): Dra
   const context = contextOfPage(page);
   const order = orderOf(entries, context.products);
   if (order === undefined) return null;
-  const typed =
-    order.kind === 'maintenance' && entries.kind === 'maintenance'
-      ? { ...order, typedRate: entries.rate }
-      : order;
   const at = parseInstant(content.plannedStart) ?? context.at;
-  const worked = workOutOn(kg, typed, { ...context, at }, content.line);
+  const workOut = (inputs: OrderInputs) => workOutOn(kg, inputs, { ...context, at }, content.line);
+  const proposed = workOut(order);
+  // a rate that follows from the entries needs no line of its own
+  const isTyped =
+    entries.kind === 'maintenance' &&
+    proposed.ok &&
+    proposed.figures.kind === 'maintenance' &&
+    proposed.figures.workedOutRate !== entries.rate;
+  const worked =
+    isTyped && order.kind === 'maintenance' ? workOut({ ...order, typedRate: entries.rate }) : proposed;
   return worked.ok ? { gauge: drawn(worked.gauge), sums: sumsOf(worked.steps) } : null;
 }
