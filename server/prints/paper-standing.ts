@@ -1,7 +1,7 @@
 import type { Actor } from '@shared/accounts/actor';
 import { can } from '@shared/orders/can';
 import { maySee } from '@shared/orders/coverage';
-import { isOverdue, isSigned, STATE_WORDS } from '@shared/orders/states';
+import { isOverdue, isSigned } from '@shared/orders/states';
 import { toRfc3339, type Instant } from '@shared/time';
 import type { z } from 'zod';
 import type { ROUTES } from '@shared/routes';
@@ -21,10 +21,9 @@ export const UNKNOWN_PAPER: Standing = {
   order: null,
 };
 
-const wordsFor = (current: boolean, state: keyof typeof STATE_WORDS): string =>
-  current
-    ? 'This paper is current.'
-    : `This paper is not current (${STATE_WORDS[state].toLowerCase()}). Do not follow it.`;
+/** The same words for every reason: a stranger does not learn what became of the order. */
+const wordsFor = (current: boolean): string =>
+  current ? 'This paper is current.' : 'This paper is not current. Do not follow it.';
 
 /** A stranger hears current or not and the version; who may see the order also gets the way to it. */
 export async function paperStanding(
@@ -42,7 +41,7 @@ export async function paperStanding(
   return {
     known: true,
     isCurrent: current,
-    words: late ? 'This order is past its time. Ask before the next bag.' : wordsFor(current, standing.state),
+    words: wordsFor(current),
     version: standing.version,
     printedAt: toRfc3339(print.at),
     order: actor === null ? null : await orderFor(tx, actor, print.versionId, now),

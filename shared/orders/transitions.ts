@@ -155,7 +155,7 @@ export const TRANSITIONS: Readonly<Record<Act, Transition>> = {
     notBy: ['author'],
     guards: ['on-ward', 'own-check', 'not-slipped-before'],
   }),
-  settle: row(['disputed'], ['returned'], ['prescriber', 'pharmacist', 'lead'], {
+  settle: row(['disputed'], ['returned', 'countersigned'], ['prescriber', 'pharmacist', 'lead'], {
     notBy: ['author', 'checker'],
     guards: ['on-ward', 'registered', 'senior-or-pharmacist'],
     signature: 'settlement',

@@ -20,7 +20,7 @@ sign-check       | awaiting-check      | signed awaiting-pharmacist | prescriber
 cannot-verify    | awaiting-check      | returned                   | prescriber pharmacist nurse lead | not author granter
 pass-on          | awaiting-check      | awaiting-check             | prescriber pharmacist nurse lead | not author
 slip             | disputed            | awaiting-check given       | prescriber pharmacist nurse lead | not author
-settle           | disputed            | returned                   | prescriber pharmacist lead       | not author checker
+settle           | disputed            | returned countersigned     | prescriber pharmacist lead       | not author checker
 withdraw         | awaiting-check      | withdrawn                  | prescriber                       | only author
 withdraw         | disputed            | withdrawn                  | prescriber                       | only author
 withdraw         | returned            | withdrawn                  | prescriber                       | only author

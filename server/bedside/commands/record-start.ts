@@ -18,6 +18,7 @@ import { sign } from '../../orders/sign-row';
 import { bedsideErrors, bedsideMisses } from '../differences';
 import { findWitness, type Witness } from '../find-witness';
 import { loadBedside, type Bedside } from '../load-bedside';
+import { judgeTotals } from '../judge-totals';
 import { judgeWeight } from '../judge-weight';
 import { judgeConnected, replaceOlder } from '../replace-older';
 import type { RecordStart } from '../start-request';
@@ -48,6 +49,7 @@ export async function recordStart(
   const refusal =
     judgeVerdicts(version, bedside.content, entries, verdicts) ??
     (await judgeWeight(tx, version, bedside, now)) ??
+    (await judgeTotals(tx, version, bedside, now)) ??
     (await judgeConnected(tx, version, request));
   if (refusal) return refusal;
   const witnessed = await judgeWitness(tx, actor, version, bedside, request.witnessLogin);

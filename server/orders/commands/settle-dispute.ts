@@ -28,7 +28,10 @@ export async function openDispute(
   return done(read.view, { entries: [noteOf('seen-figures', held, { reason: 'settlement' })] });
 }
 
-/** Settles a dispute by someone who is neither author nor checker: back to the author, never over the checker's head. */
+/**
+ * Settles a dispute by someone who is neither author nor checker: back to the author, never over the checker's head;
+ * of something given in an emergency, closed with the settlement.
+ */
 export async function settleDispute(
   tx: Tx,
   now: Instant,
@@ -41,7 +44,10 @@ export async function settleDispute(
   const { contentSha256, authorId } = held.row;
   if (contentSha256 === null) return refused('not-found');
   await sign(tx, actor, now, { versionId, meaning: 'settlement', contentSha256, note: reason });
-  await moveVersion(tx, versionId, 'returned', now);
-  const entry = noteOf('dispute-settled', held, { from: 'disputed', to: 'returned', reason });
-  return done({ ok: true }, { entries: [entry], mails: [mailTo('order-returned', authorId, held)] });
+  // what was given cannot be taken back or written again: settling it ends it, with both sets kept
+  const to = held.row.givenAt === null ? 'returned' : 'countersigned';
+  await moveVersion(tx, versionId, to, now);
+  const entry = noteOf('dispute-settled', held, { from: 'disputed', to, reason });
+  const mails = to === 'returned' ? [mailTo('order-returned', authorId, held)] : [];
+  return done({ ok: true }, { entries: [entry], mails });
 }

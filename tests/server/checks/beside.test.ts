@@ -160,4 +160,16 @@ describe('countersigning what was given in an emergency', () => {
     expect(differed.body).toMatchObject({ state: 'disputed', comparison: { outcome: 'facts-differ' } });
     expect(await stateOf(versionId)).toBe('disputed');
   });
+
+  it('and the dispute ends with its settlement: what was given cannot be written again', async () => {
+    const versionId = await given(await world.addChild());
+    const form = bolusCheckForm({ weightSource: '', workedOutBy: '', weightKg: '12', volumeMl: '120' });
+    await countersign('checker', versionId, { form, agree: false, reason: 'Weighs 12 kg' });
+    const settled = await world.as('senior').call(ROUTES.settle, {
+      params: { id: versionId },
+      body: { reason: 'Weighed again: 16.4 kg', password: PASSWORD },
+    });
+    expect(settled.body).toEqual({ ok: true });
+    expect(await stateOf(versionId)).toBe('countersigned');
+  });
 });
