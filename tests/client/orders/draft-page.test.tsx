@@ -15,7 +15,7 @@ const type = async (name: string, text: string) => {
 // the pages are large and the machine may be busy
 vi.setConfig({ testTimeout: 20_000 });
 // asking for hidden elements too spares a style computation for every element of a large page
-configure({ defaultHidden: true });
+configure({ defaultHidden: true, asyncUtilTimeout: 10_000 });
 const user = userEvent.setup({ delay: null });
 
 beforeEach(() => {
@@ -61,7 +61,7 @@ describe('the order form as it is typed', () => {
     await type('Drug volumes, mL in 24 hours', '7,5');
     expect(screen.queryByRole('alert')).not.toBeInTheDocument();
     await user.tab();
-    expect(screen.getByRole('alert')).toHaveTextContent('Use a point, not a comma: 7.5');
+    expect(await screen.findByRole('alert')).toHaveTextContent('Use a point, not a comma: 7.5');
     expect(field('Drug volumes, mL in 24 hours')).toHaveValue('7,5');
     expect(results()).toHaveTextContent('Nothing is worked out yet');
   });

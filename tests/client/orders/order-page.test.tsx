@@ -13,7 +13,7 @@ import { makeOpen, makeOrder } from './make-order';
 
 // the pages are large and the machine may be busy
 vi.setConfig({ testTimeout: 20_000 });
-configure({ defaultHidden: true });
+configure({ defaultHidden: true, asyncUtilTimeout: 10_000 });
 const user = userEvent.setup({ delay: null });
 
 afterEach(() => vi.unstubAllGlobals());

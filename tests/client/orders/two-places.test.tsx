@@ -13,7 +13,7 @@ const theirs = maintenanceForm({ drugsMl: '120', feedsNote: 'Two bottles' });
 // the pages are large and the machine may be busy
 vi.setConfig({ testTimeout: 20_000 });
 // asking for hidden elements too spares a style computation for every element of a large page
-configure({ defaultHidden: true });
+configure({ defaultHidden: true, asyncUtilTimeout: 10_000 });
 const user = userEvent.setup({ delay: null });
 
 beforeEach(() => {

@@ -70,7 +70,7 @@ function useGiven(chart: Chart) {
   const { zone } = useKnownMe().hospital;
   const navigate = useNavigate();
   const now = localDateTime(parseInstant(chart.now) ?? instant(0), zone);
-  const rhf = useForm<GivenForm>({ defaultValues: emptyGivenForm(now), mode: 'onBlur' });
+  const rhf = useForm<GivenForm>({ defaultValues: emptyGivenForm(now) });
   const record = useAct('recordGiven');
   const password = usePassword();
   const [trouble, setTrouble] = useState('');
@@ -114,6 +114,10 @@ function useGiven(chart: Chart) {
 type Option = { value: string; label: string };
 type PartProps = { rhf: UseFormReturn<GivenForm> };
 
+/** What was wrong with an entry goes as soon as it is typed in: at leaving it, the page would move under a press. */
+const entry = (rhf: UseFormReturn<GivenForm>, name: keyof GivenForm) =>
+  rhf.register(name, { onChange: () => rhf.clearErrors(name) });
+
 function WhatGiven({
   rhf,
   values,
@@ -132,7 +136,7 @@ function WhatGiven({
         placeholder="Choose the fluid"
         options={fluids}
         error={errors.productId?.message}
-        {...rhf.register('productId')}
+        {...entry(rhf, 'productId')}
       />
       <Row>
         <NumberField
@@ -140,13 +144,13 @@ function WhatGiven({
           unit="mL"
           hint={perKgWords(values.volumeMl, kg)}
           error={errors.volumeMl?.message}
-          {...rhf.register('volumeMl')}
+          {...entry(rhf, 'volumeMl')}
         />
         <NumberField
           label="Given over"
           unit="min"
           error={errors.overMinutes?.message}
-          {...rhf.register('overMinutes')}
+          {...entry(rhf, 'overMinutes')}
         />
       </Row>
       <Segmented
@@ -169,7 +173,7 @@ function WhenGiven({ rhf, people }: PartProps & { people: Option[] }) {
           label="Given at"
           width="full"
           error={errors.givenAt?.message}
-          {...rhf.register('givenAt')}
+          {...entry(rhf, 'givenAt')}
         />
         <SelectField
           label="On whose word"
@@ -177,10 +181,10 @@ function WhenGiven({ rhf, people }: PartProps & { people: Option[] }) {
           placeholder="Name the prescriber"
           options={people}
           error={errors.onWordOfId?.message}
-          {...rhf.register('onWordOfId')}
+          {...entry(rhf, 'onWordOfId')}
         />
       </Row>
-      <TextField label="Why" error={errors.reason?.message} {...rhf.register('reason')} />
+      <TextField label="Why" error={errors.reason?.message} {...entry(rhf, 'reason')} />
     </Group>
   );
 }
@@ -231,7 +235,7 @@ function Given({ chart }: { chart: Chart }) {
                   .map((row) => ({ value: row.id, label: weightWords(row, zone) })),
               ]}
               error={errors.weightId?.message}
-              {...rhf.register('weightId')}
+              {...entry(rhf, 'weightId')}
             />
           </Group>
           <WhenGiven rhf={rhf} people={people} />
@@ -241,7 +245,7 @@ function Given({ chart }: { chart: Chart }) {
             ) : (
               <p className="soft pt-[8px]">The sentence to read back appears when the entries are there.</p>
             )}
-            <Choice {...rhf.register('readBack')}>I read this back and it was confirmed</Choice>
+            <Choice {...entry(rhf, 'readBack')}>I read this back and it was confirmed</Choice>
             {errors.readBack && (
               <p className="err" role="alert">
                 {errors.readBack.message}

@@ -1,11 +1,26 @@
 import { useMemo } from 'react';
-import { useWatch, type UseFormReturn } from 'react-hook-form';
+import { useWatch, type UseFormRegister, type UseFormReturn } from 'react-hook-form';
 import type { OrderForm, OrderFormField } from '@shared/orders/form';
 import { workOutDraft, type DraftWork } from '@shared/orders/work-out-draft';
 import type { DraftContext } from '@shared/routes/orders';
 import { isFormField } from './apply-offer';
 import { brimsByField } from './brim-fields';
 import type { DraftForm } from './draft-form';
+
+/**
+ * Leaving a field may open a message under it, and what lies below moves. A press on one of those buttons has its
+ * release then beside it and does nothing, so the message waits until a press is over.
+ */
+const PRESS_MS = 200;
+
+function afterThePress(register: UseFormRegister<OrderForm>): UseFormRegister<OrderForm> {
+  return (name, options) => {
+    const wiring = register(name, options);
+    const onBlur: typeof wiring.onBlur = (event) =>
+      new Promise((resolve) => setTimeout(() => resolve(wiring.onBlur(event) as Promise<void>), PRESS_MS));
+    return { ...wiring, onBlur };
+  };
+}
 
 type Errors = { brims: Map<OrderFormField, string>; entries: Partial<Record<OrderFormField, string>> };
 
@@ -38,7 +53,7 @@ export function useDraftFormValue(
     values,
     context,
     work,
-    register: form.register,
+    register: afterThePress(form.register),
     set: (changes) => {
       for (const [field, value] of Object.entries(changes)) {
         form.setValue(field as OrderFormField, value, { shouldDirty: true, shouldTouch: true });
