@@ -168,8 +168,8 @@ export async function compareBedside(page: Page, child: MadeChild, bag: BagWords
 }
 
 export async function compareChild(page: Page, child: MadeChild): Promise<void> {
-  await typeInto(page, 'Hospital number on the wristband', child.number);
-  await page.getByLabel('Date of birth on the wristband').fill(child.bornOn);
+  await typeInto(page, 'Hospital no. on the band', child.number);
+  await page.getByLabel('Date of birth on the band').fill(child.bornOn);
   await pick(page.getByLabel('Who said name and date of birth'), 'A carer');
   await page.keyboard.press('Tab');
 }
@@ -180,7 +180,7 @@ export async function compareBag(page: Page, { fluid, size = '500' }: BagWords):
   await typeInto(page, /^Batch/, 'LT0417');
   const next = new Date(Date.now() + 200 * 86_400_000).toISOString().slice(0, 10);
   await page.getByLabel('Expires on').fill(next);
-  await page.keyboard.press('Tab');
+  await button(page, 'Compare with the order').click();
 }
 
 export async function comparePump(
@@ -194,7 +194,7 @@ export async function comparePump(
 }
 
 export async function compareLine(page: Page): Promise<void> {
-  await pick(page.getByLabel('Kind of line'), 'Peripheral cannula');
+  await pick(page.getByLabel('Kind of line'), 'Peripheral');
   await typeInto(page, /^Where, for instance/, 'Left hand');
   for (const words of ['Traced from the bag', 'Clamp open', 'Site looks well'])
     await page.getByRole('checkbox', { name: words }).check();

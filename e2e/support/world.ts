@@ -1,5 +1,13 @@
 import { AxeBuilder } from '@axe-core/playwright';
-import { test as base, expect, type Browser, type BrowserContext, type Page } from '@playwright/test';
+import {
+  test as base,
+  expect,
+  type APIRequestContext,
+  type Browser,
+  type BrowserContext,
+  type BrowserContextOptions,
+  type Page,
+} from '@playwright/test';
 import { createHash, randomBytes, randomUUID } from 'node:crypto';
 import { fixedClock, systemClock } from '../../server/clock';
 import { openDatabase, type Database } from '../../server/db/client';
@@ -34,11 +42,15 @@ export type StoryWorld = {
   openSignedOut(path?: string): Promise<Page>;
   /** Signs a person in within a window that is open. */
   loginAs(context: BrowserContext, person: CastKey): Promise<void>;
+  /** That person's session without a page. */
+  requestAs(person: CastKey): Promise<APIRequestContext>;
   addChild(change?: ChildChange): Promise<MadeChild>;
   addWeight(childId: string, change: WeightChange): Promise<string>;
   addResults(childId: string, values: Record<string, number>): Promise<void>;
   /** Runs as the owner inside this hospital: to look, and to plant what no screen makes. */
   within<T>(work: (tx: Tx) => Promise<T>): Promise<T>;
+  /** What idling does, or the lock of another window. */
+  lockSessions(person: CastKey): Promise<void>;
   mail: { waitFor(person: CastKey, subject: string | RegExp): Promise<Mail> };
   /** No breach of WCAG 2.2 A and AA that a program can find. */
   axe(page: Page): Promise<void>;
@@ -102,13 +114,13 @@ async function makeStoryHospital(owner: Database): Promise<MadeHospital<CastKey>
   );
 }
 
-type Windows = { contexts: BrowserContext[]; faults: string[]; ignore: RegExp[] };
+type Windows = { contexts: BrowserContext[]; faults: string[]; ignore: readonly RegExp[] };
 
-export async function makeStoryWorld(
+async function makeStoryWorld(
   place: AppPlace,
   browser: Browser,
   windows: Windows,
-  contextOptions: Parameters<Browser['newContext']>[0] = {},
+  contextOptions: BrowserContextOptions,
 ): Promise<{ world: StoryWorld; close: () => Promise<void> }> {
   const owner = openDatabase(place.ownerUrl, { max: 2, applicationName: 'story', clock: systemClock });
   const hospital = await makeStoryHospital(owner);
@@ -125,6 +137,7 @@ export async function makeStoryWorld(
     return page;
   };
 
+  const requests = new Map<CastKey, APIRequestContext>();
   const world: StoryWorld = {
     place,
     hospital,
@@ -132,6 +145,19 @@ export async function makeStoryWorld(
     open: (person, path = '/') => openSignedOut(path, person),
     openSignedOut: (path) => openSignedOut(path),
     loginAs: (context, person) => giveSession(owner, context, place.baseUrl, hospital.people[person].loginId),
+    async requestAs(person) {
+      const known = requests.get(person);
+      if (known) return known;
+      const context = await browser.newContext({ baseURL: place.baseUrl });
+      windows.contexts.push(context);
+      await world.loginAs(context, person);
+      requests.set(person, context.request);
+      return context.request;
+    },
+    async lockSessions(person) {
+      const { loginId } = hospital.people[person];
+      await owner.sql.unsafe('update auth.sessions set locked_at = now() where login_id = $1', [loginId]);
+    },
     addChild: (change) => insertChild(scene, change),
     addWeight: (childId, change) => insertWeight(scene, childId, change),
     addResults: (childId, values) => insertResults(scene, childId, values),
@@ -174,19 +200,29 @@ type StoryFixtures = {
   world: StoryWorld;
 };
 
+type Story = { expectedFaults: readonly RegExp[]; options?: BrowserContextOptions };
+
+/** Gives a story its hospital, closes its windows, and fails it for whatever went wrong in one of them. */
+export async function storyWorld(
+  place: AppPlace,
+  browser: Browser,
+  { expectedFaults, options = {} }: Story,
+  use: (world: StoryWorld) => Promise<void>,
+): Promise<void> {
+  const windows: Windows = { contexts: [], faults: [], ignore: expectedFaults };
+  const { world, close } = await makeStoryWorld(place, browser, windows, options);
+  await use(world);
+  await Promise.all(windows.contexts.map((context) => context.close()));
+  await close();
+  expect(windows.faults, 'faults on the pages of this story').toEqual([]);
+}
+
 /** A story: its own hospital, and no fault on any page it opened. */
 export const test = base.extend<StoryFixtures>({
   place: async ({}, use) => use(readAppPlace()),
   expectedFaults: [[], { option: true }],
-  world: async ({ place, browser, expectedFaults, contextOptions, viewport, locale, timezoneId }, use) => {
-    const windows: Windows = { contexts: [], faults: [], ignore: expectedFaults };
-    const options = { ...contextOptions, viewport, locale, timezoneId };
-    const { world, close } = await makeStoryWorld(place, browser, windows, options);
-    await use(world);
-    await Promise.all(windows.contexts.map((context) => context.close()));
-    await close();
-    expect(windows.faults, 'faults on the pages of this story').toEqual([]);
-  },
+  world: async ({ place, browser, expectedFaults, viewport, locale, timezoneId }, use) =>
+    storyWorld(place, browser, { expectedFaults, options: { viewport, locale, timezoneId } }, use),
 });
 
 export { expect };
