@@ -25,7 +25,7 @@ const typed =
 export function ChildFields({ entries, verdict, enter, onLast }: FieldsProps<BedsideEntries['child']>) {
   return (
     <div className="grid gap-s3">
-      <div className="two">
+      <div className="two flex gap-s3">
         <TextField
           id="bedside-number"
           label="Hospital no. on the band"
@@ -81,7 +81,7 @@ export function BagFields({ entries, verdict, enter, onLast, products, isHighRis
         onChange={typed(enter, 'productId')}
         error={findingOf(verdict, 'productId')}
       />
-      <div className="two">
+      <div className="two flex gap-s3">
         <NumberField
           id="bedside-sizeMl"
           label="Bag size"
@@ -102,7 +102,7 @@ export function BagFields({ entries, verdict, enter, onLast, products, isHighRis
           error={findingOf(verdict, 'batch')}
         />
       </div>
-      <div className="two">
+      <div className="two flex gap-s3">
         <TextField
           id="bedside-bagNumber"
           label="Bag number, if it has one"
@@ -152,7 +152,7 @@ export function PumpFields({ entries, verdict, enter, onLast, byPump, idPrefix =
   return (
     <div className="grid gap-s3">
       {byPump && (
-        <div className="two">
+        <div className="two flex gap-s3">
           <TextField
             id={id('device')}
             label="Pump number"
@@ -173,7 +173,7 @@ export function PumpFields({ entries, verdict, enter, onLast, byPump, idPrefix =
         </div>
       )}
       <div>
-        <div className="two">
+        <div className="two flex gap-s3">
           {byPump ? (
             <>
               {figure('rate', 'Rate the pump shows', 'mL/h', false)}
@@ -221,7 +221,7 @@ const SEEN = [
 export function LineFields({ entries, verdict, enter, onLast }: FieldsProps<BedsideEntries['line']>) {
   return (
     <div className="grid gap-s3">
-      <div className="two">
+      <div className="two flex gap-s3">
         <SelectField
           id="bedside-lineClass"
           label="Kind of line"

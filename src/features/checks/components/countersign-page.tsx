@@ -136,7 +136,7 @@ function Decide({ page, order, source, onDone }: DecideProps) {
       <main className="chk" id="main" tabIndex={-1}>
         <MaySee page={page} sentence="The child, the chart and why it was given." />
         <OwnFigures {...{ page, check, wrongChild }} title="Your own figures" />
-        <section aria-label="Countersign">
+        <section aria-label="Countersign" className="max-mid:px-s4">
           <WhatWasGiven order={order} zone={page.zone} />
           <section className="sec" aria-labelledby="countersign">
             <h2 id="countersign">
@@ -234,7 +234,7 @@ export function CountersignPage() {
   }
   return (
     <>
-      <CheckStrip page={page.data}>
+      <CheckStrip page={page.data} given={order.data.open?.content}>
         <Link to={`/children/${page.data.child.id}`}>Chart</Link>
       </CheckStrip>
       {outcome ? (
