@@ -117,25 +117,22 @@ const EDIE: Required<OwnFigures> = {
   volume: '1056',
 };
 
-/** A line of the check page, by its head in the margin. */
-const line = (page: Page, head: string) => page.getByRole('group', { name: new RegExp(`^${head}`) });
-
 /** Types one's own figures into the covered check. */
 export async function fillCheck(page: Page, change: OwnFigures = {}): Promise<void> {
   const own = { ...EDIE, ...change };
   await typeInto(page, 'Initials', own.initials);
-  await pick(line(page, 'Child').getByLabel('Sex'), own.sex);
-  await line(page, 'Child').getByLabel('Age', { exact: true }).pressSequentially(own.age);
-  await pick(line(page, 'Child').getByLabel('Age in'), 'years');
+  await pick(page.getByRole('combobox', { name: 'Sex' }), own.sex);
+  await page.getByRole('textbox', { name: 'Age', exact: true }).pressSequentially(own.age);
+  await pick(page.getByRole('combobox', { name: 'Age in' }), 'years');
   await typeInto(page, 'Dosing weight', own.weight);
   await pick(page.getByLabel('Where it is from'), 'Read from the chart');
   await typeInto(page, /^Feeds and drinks/, own.feeds);
   await typeInto(page, /^Drugs and other lines/, own.drugs);
-  await pick(line(page, 'Method').getByLabel('Method'), own.method);
+  await pick(page.getByRole('combobox', { name: 'Method' }), own.method);
   await choose(page, 'Fraction of full maintenance', own.fraction);
-  await pick(line(page, 'Fluid').getByLabel('Fluid'), own.fluid);
+  await pick(page.getByRole('combobox', { name: 'Fluid' }), own.fluid);
   await pick(page.getByLabel('Potassium in the bag'), own.potassium);
-  await line(page, 'Over').getByLabel('Over').pressSequentially(own.hours);
+  await page.getByRole('textbox', { name: 'Over' }).pressSequentially(own.hours);
   await choose(page, 'Worked out', 'By hand');
   await typeInto(page, 'Rate on the pump', own.rate);
   await typeInto(page, 'Total volume', own.volume);
