@@ -1,5 +1,6 @@
 import { spawn } from 'node:child_process';
 import { once } from 'node:events';
+import { setTimeout as sleep } from 'node:timers/promises';
 import { median, round, tell } from './interleave';
 
 /** One `npm start` of the demo from nothing running to the first page's bytes, seconds. */
@@ -20,6 +21,10 @@ async function startOnce(): Promise<number> {
     seconds = (performance.now() - started) / 1000;
     break;
   }
+  // a start beside a running demo only tells its address and ends
+  await sleep(500);
+  if (child.exitCode !== null)
+    throw new Error(`no start of its own, is the demo running? ${said.slice(-400)}`);
   child.kill('SIGTERM');
   await once(child, 'exit');
   if (seconds === 0) throw new Error(`the demo did not start: ${said.slice(-400)}`);
