@@ -1,3 +1,4 @@
+import './lib/no-eval';
 import './styles/app.css';
 import { StrictMode } from 'react';
 import { createRoot } from 'react-dom/client';
