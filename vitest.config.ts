@@ -25,6 +25,7 @@ export default defineConfig({
           environment: 'jsdom',
           include: ['tests/client/**/*.test.{ts,tsx}'],
           setupFiles: ['tests/client/support/setup.ts'],
+          sequence: { groupOrder: 1 },
         },
       },
       {
@@ -35,6 +36,8 @@ export default defineConfig({
           include: ['tests/server/**/*.test.ts'],
           globalSetup: ['tests/server/support/global-setup.ts'],
           maxWorkers: 2,
+          // projects with their own number of workers run one after the other
+          sequence: { groupOrder: 2 },
           hookTimeout: 60_000,
           testTimeout: 30_000,
         },
