@@ -13,7 +13,7 @@ type Result = CheckPage['results'][number];
 function resultLine(results: readonly Result[]): string {
   const isOneUnit = results.every(({ unit }) => unit === results[0]?.unit);
   const parts = results.map(
-    ({ analyte, value, unit }) => `${analyte} ${value}${isOneUnit ? '' : ` ${unit}`}`,
+    ({ analyte, value, unit }) => `${analyte} ${String(Number(value))}${isOneUnit ? '' : ` ${unit}`}`,
   );
   const text = `${parts.join(', ')}${isOneUnit && results[0] ? ` ${results[0].unit}` : ''}`;
   return text.charAt(0).toUpperCase() + text.slice(1);

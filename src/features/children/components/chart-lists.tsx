@@ -165,7 +165,7 @@ export function ResultList({ results }: { results: Chart['results'] }) {
     <ul className="lines-list">
       {results.map((result) => (
         <li key={`${result.analyte}${result.at}`}>
-          {result.analyte} <b>{result.value.replace(/\.?0+$/, '')}</b> {result.unit}{' '}
+          {result.analyte} <b>{String(Number(result.value))}</b> {result.unit}{' '}
           <span className="soft">{moment(result.at)}</span>
         </li>
       ))}

@@ -172,6 +172,7 @@ function WhenGiven({ rhf, people }: PartProps & { people: Option[] }) {
         <DateTimeField
           label="Given at"
           width="full"
+          value={rhf.watch('givenAt')}
           error={errors.givenAt?.message}
           {...entry(rhf, 'givenAt')}
         />

@@ -37,9 +37,11 @@ export function UrgencyStrip({ labelled = false }: { labelled?: boolean }) {
 }
 
 function Moment({ field, width }: { field: 'plannedStart' | 'reviewBy' | 'bloodsBy'; width?: string }) {
-  const { register, errorOf } = useDraftForm();
+  const { values, register, errorOf } = useDraftForm();
   return (
     <DateTimeField
+      value={values[field]}
+      short
       label={FIELD_WORDS[field]}
       width={width}
       id={fieldId(field)}
