@@ -1,6 +1,7 @@
 import { eq } from 'drizzle-orm';
 import { nearMisses } from '../../server/db/schema/near-misses';
-import { button, compareBag, compareChild, comparePump, timelineLine } from '../support/hands';
+import { compareBag, compareChild, comparePump, timelineLine } from '../support/hands';
+import { button } from '../support/words';
 import { SALINE_GLUCOSE_K, signedOrder } from '../support/signed-order';
 import { expect, test } from '../support/world';
 

@@ -1,4 +1,5 @@
-import { button, choose, openChart, pick, signAndAsk, timelineLine, typeInto } from '../support/hands';
+import { openChart, signAndAsk, timelineLine } from '../support/hands';
+import { button, choose, pick, typeInto } from '../support/words';
 import { expect, PASSWORD, test } from '../support/world';
 
 test('an emergency bolus is checked beside its author, blind, on the same screen', async ({ world }) => {

@@ -1,4 +1,5 @@
-import { button, fillCheck, lockIn, timelineLine, typeInto } from '../support/hands';
+import { fillCheck, lockIn, timelineLine } from '../support/hands';
+import { button, typeInto } from '../support/words';
 import { draftByApi, signByApi } from '../support/signed-order';
 import { expect, PASSWORD, test } from '../support/world';
 

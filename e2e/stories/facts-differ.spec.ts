@@ -1,13 +1,5 @@
-import {
-  button,
-  fillCheck,
-  lockIn,
-  pick,
-  signAndAsk,
-  signCheck,
-  timelineLine,
-  typeInto,
-} from '../support/hands';
+import { fillCheck, lockIn, signAndAsk, signCheck, timelineLine } from '../support/hands';
+import { button, pick, typeInto } from '../support/words';
 import { draftByApi, signByApi } from '../support/signed-order';
 import { expect, PASSWORD, test, type StoryWorld } from '../support/world';
 import type { MadeChild } from '../support/children';

@@ -1,15 +1,7 @@
 import { eq } from 'drizzle-orm';
 import { nearMisses } from '../../server/db/schema/near-misses';
-import {
-  button,
-  choose,
-  draftMaintenance,
-  openChart,
-  pick,
-  signAndAsk,
-  timelineLine,
-  typeInto,
-} from '../support/hands';
+import { draftMaintenance, openChart, signAndAsk, timelineLine } from '../support/hands';
+import { button, choose, pick, typeInto } from '../support/words';
 import { expect, PASSWORD, test } from '../support/world';
 
 test('over the brim: the sign button goes, a legal volume is offered, the near miss is kept', async ({

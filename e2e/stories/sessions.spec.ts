@@ -1,6 +1,7 @@
 import { eq } from 'drizzle-orm';
 import { drafts } from '../../server/db/schema/orders';
-import { button, signAndAsk, typeInto } from '../support/hands';
+import { signAndAsk } from '../support/hands';
+import { button, typeInto } from '../support/words';
 import { draftByApi } from '../support/signed-order';
 import { expect, PASSWORD, test } from '../support/world';
 

@@ -5,7 +5,6 @@ import { join } from 'node:path';
 import { countHands, keepCount } from '../support/count-hands';
 import { expect, PASSWORD, test } from '../support/world';
 import {
-  button,
   compareBedside,
   fillCheck,
   fillMaintenance,
@@ -15,6 +14,7 @@ import {
   signCheck,
   timelineLine,
 } from '../support/hands';
+import { button } from '../support/words';
 
 /** Figures and names a checker must not meet before lock-in. */
 const AUTHORS = ['44 mL/h', '1056', 'Imogen Valehart', '80% of'];

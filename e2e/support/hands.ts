@@ -1,34 +1,9 @@
-import { expect, type Locator, type Page } from '@playwright/test';
+import { expect, type Page } from '@playwright/test';
 import type { MadeChild } from './children';
+import { button, choose, pick, typeInto } from './words';
 import { PASSWORD, type StoryWorld } from './world';
 
 /** What people do at their screens, by the words that stand there. Typing is typing: key by key. */
-
-export const button = (page: Page | Locator, name: string | RegExp) => page.getByRole('button', { name });
-export const radio = (page: Page | Locator, group: string | RegExp, name: string | RegExp) =>
-  page.getByRole('radiogroup', { name: group }).getByRole('radio', { name });
-export const typeInto = (page: Page | Locator, label: string | RegExp, text: string) =>
-  page.getByLabel(label).and(page.locator('input, textarea')).pressSequentially(text);
-
-/** Ticks a choice of a strip as a finger does: by its words. */
-export async function choose(page: Page | Locator, group: string | RegExp, name: string | RegExp) {
-  await page.getByRole('radiogroup', { name: group }).locator('label').filter({ hasText: name }).click();
-}
-
-/** Chooses from a native select by its keys: arrows, or the first letters where that is shorter. */
-export async function pick(select: Locator, label: string): Promise<void> {
-  await expect(select).toBeEnabled();
-  const options = (await select.locator('option:not([hidden])').allTextContents()).map((text) => text.trim());
-  const at = options.indexOf(label);
-  if (at < 0) throw new Error(`no "${label}" among ${options.join(', ')}`);
-  await select.focus();
-  const now = await select.evaluate((element: HTMLSelectElement) => element.selectedOptions[0]?.text.trim());
-  // from the placeholder the first arrow goes to the first option
-  const steps = at - options.indexOf(now ?? '');
-  const key = steps < 0 ? 'ArrowUp' : 'ArrowDown';
-  for (let step = 0; step < Math.abs(steps); step += 1) await select.press(key);
-  await expect(select.locator('option:checked')).toHaveText(label);
-}
 
 export async function openChart(page: Page, child: MadeChild): Promise<void> {
   await page

@@ -1,5 +1,6 @@
 import { expect, test } from '../../support/alone-world';
-import { button, signAndAsk } from '../../support/hands';
+import { signAndAsk } from '../../support/hands';
+import { button } from '../../support/words';
 import { draftByApi } from '../../support/signed-order';
 
 // while it is away the server answers 503, and the browser writes that down
