@@ -154,6 +154,7 @@ function loadedLine(row: CoveredLine, opened: Opened | undefined, clock: LineClo
       state,
       stateSince: toRfc3339(stateSince),
       isOverdue: isOverdue(state, lapsesAt, clock.now),
+      isYours: row.viewerIsAuthor,
       open:
         opened === undefined || opened.content === null ? null : presentOpen(opened.content, opened.author),
       nextDue: { ...due, note },

@@ -62,6 +62,8 @@ export const orderLineSchema = z.object({
   state: z.enum(VERSION_STATES),
   stateSince: at,
   isOverdue: z.boolean(),
+  /** The reader drew it up: an own draft is never covered, only not worked out yet. */
+  isYours: z.boolean(),
   open: z
     .object({
       title: z.string(),

@@ -86,8 +86,8 @@ export function WeightList({ weights, dosingWeightId, onConfirm }: WeightsProps)
   );
 }
 
-const orderPath = ({ state, versionId, open }: OrderLine): string =>
-  isDraft(state) && open !== null ? `/drafts/${versionId}` : `/orders/${versionId}`;
+const orderPath = ({ state, versionId, isYours }: OrderLine): string =>
+  isDraft(state) && isYours ? `/drafts/${versionId}` : `/orders/${versionId}`;
 
 export function OrderList({ orders }: { orders: readonly OrderLine[] }) {
   const moment = useMoment();
@@ -115,7 +115,9 @@ export function OrderList({ orders }: { orders: readonly OrderLine[] }) {
                 {order.code}, version {order.version}
               </SecondLine>
             </td>
-            <td>{order.open ? order.open.fluid : <CoveredChip />}</td>
+            <td>
+              <FluidWords order={order} />
+            </td>
             <td className="r">
               {order.open &&
                 (order.open.rateMlPerH === null
@@ -136,6 +138,11 @@ export function OrderList({ orders }: { orders: readonly OrderLine[] }) {
     </table>
   );
 }
+
+const FluidWords = ({ order }: { order: OrderLine }) => {
+  if (order.open) return order.open.fluid;
+  return order.isYours ? <span className="soft">Not worked out yet</span> : <CoveredChip />;
+};
 
 const CoveredChip = () => (
   <span className="hatch-chip">

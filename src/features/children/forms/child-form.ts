@@ -1,4 +1,5 @@
 import { z } from 'zod';
+import { SEXES } from '@shared/calc/types';
 import { childFields, type ChildFields } from '@shared/children/schema';
 import type { ChildHead } from '@shared/routes/children';
 import { localDateTime, parseInstant } from '@shared/time';
@@ -26,7 +27,7 @@ export type TypedChild = z.infer<typeof typedChild>;
 export const toFields = (typed: TypedChild): unknown => ({
   ...typed,
   bornAt: typed.bornTime === '' ? null : `${typed.bornOn}T${typed.bornTime}`,
-  sex: typed.sex === '' || typed.sex === 'not-recorded' ? null : typed.sex,
+  sex: typed.sex === 'not-recorded' ? null : typed.sex,
   gestationWeeks: whole(typed.gestationWeeks),
   gestationDays: whole(typed.gestationDays),
 });
@@ -34,7 +35,13 @@ export const toFields = (typed: TypedChild): unknown => ({
 /** Reads the form as typed into the fields of the API; messages land on the field they belong to. */
 export const childFormSchema = typedChild
   .transform(toFields)
-  .pipe(childFields.extend({ bed: z.string(), wardId: z.string() }));
+  .pipe(
+    childFields.extend({
+      sex: z.enum(SEXES, 'Choose, or say that it is not recorded.').nullable(),
+      bed: z.string(),
+      wardId: z.string(),
+    }),
+  );
 export type ReadChild = ChildFields & { bed: string; wardId: string };
 
 export const emptyChild = (wardId: string): TypedChild => ({

@@ -12,8 +12,8 @@ import { METHOD_WORDS } from '@shared/weights/chart-weight';
 import { kgWords } from '@/features/children/components/child-strip';
 
 /** A draft opens in its form, everything else on its page. */
-export const orderHref = ({ state, versionId, open }: OrderLine): string =>
-  isDraft(state) && open !== null ? `/drafts/${versionId}` : `/orders/${versionId}`;
+export const orderHref = ({ state, versionId, isYours }: OrderLine): string =>
+  isDraft(state) && isYours ? `/drafts/${versionId}` : `/orders/${versionId}`;
 
 function WeightCells({ weight, zone }: { weight: WardRow['weight']; zone: string }) {
   if (weight === null)
@@ -68,9 +68,7 @@ function FluidCells({ order }: { order: OrderLine | undefined }) {
           <SecondLine>{order.code}</SecondLine>
         </td>
         <td className="r rt" colSpan={3}>
-          <span className="hatch-chip">
-            <span>Covered</span>
-          </span>
+          {order.isYours ? <span className="soft">Not worked out yet</span> : <CoveredChip />}
         </td>
       </>
     );
@@ -90,6 +88,12 @@ function FluidCells({ order }: { order: OrderLine | undefined }) {
     </>
   );
 }
+
+const CoveredChip = () => (
+  <span className="hatch-chip">
+    <span>Covered</span>
+  </span>
+);
 
 type GaugeProps = { gauge: NonNullable<NonNullable<OrderLine['open']>['gauge']>; onPump: boolean };
 function RowGauge({ gauge, onPump }: GaugeProps) {
