@@ -1,5 +1,6 @@
 import type { OrderContent } from '@shared/orders/content';
 import { drawGauge, type GaugeDrawing } from '@shared/gauge/geometry';
+import { ghostWords } from '@shared/gauge/ghost-words';
 import type { Text } from '@shared/gauge/labels';
 import { INK, type Sheet, type TextStyle } from './sheet';
 
@@ -93,7 +94,7 @@ export function gaugeBlock(
     brimMl: Number(gauge.brimMl),
     brimNote: gauge.brimNote,
     bands: gauge.bands.map(({ label, ml, fullMl }) => ({ label, ml: Number(ml), fullMl: Number(fullMl) })),
-    ghosts: gauge.ghosts.map(({ label, ml }) => ({ label, ml: Number(ml) })),
+    ghosts: gauge.ghosts.map(({ label, ml }) => ({ label: ghostWords(label, Number(ml)), ml: Number(ml) })),
     heightPx: HEIGHT,
     widthPx: width,
     vesselPx: 54,

@@ -150,7 +150,8 @@ export const figureBlock = (sheet: Sheet, paper: OrderPaper, y: number): number 
   const { content, zone } = paper;
   const main = mainFigure(content);
   sheet.line(PAGE.left, y, PAGE.right, y, 1);
-  sheet.text(main.label, PAGE.left, y + 10, { weight: 'semibold' });
+  const label = paper.watermark ? `Not in force: ${paper.watermark.toLowerCase()}` : main.label;
+  sheet.text(label, PAGE.left, y + 10, { weight: 'semibold', color: paper.watermark ? INK.brim : INK.ink });
   const wide = bigNumber(sheet, main.number, PAGE.left - 3, y + 8, 84);
   sheet.text(main.unit, PAGE.left + wide + 10, y + 62, { size: 22, color: INK.soft });
   sheet.text(main.under, PAGE.left, y + 108, { size: 14 });

@@ -115,8 +115,11 @@ export async function orderPdf(paper: OrderPaper): Promise<Buffer> {
   y = cautionsBlock(sheet, paper, y);
   next(60 + paper.signatures.length * 34);
   y = signedBlock(sheet, paper, y);
-  next(126);
-  bedsideBlock(sheet, y);
+  // boxes to tick would invite someone to follow it
+  if (paper.watermark === null) {
+    next(126);
+    bedsideBlock(sheet, y);
+  }
   footBlock(sheet, paper);
   dressPages(sheet, paper);
   return sheet.finish();

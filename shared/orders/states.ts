@@ -56,6 +56,20 @@ export const isIn = (state: VersionState, chosen: VersionState): boolean => stat
 export const isOverdue = (state: VersionState, lapsesAt: number | null, now: number): boolean =>
   (state === 'running' || state === 'held') && lapsesAt !== null && now > lapsesAt;
 
+const ASKED_FOR: readonly VersionState[] = [
+  'draft',
+  'awaiting-check',
+  'disputed',
+  'returned',
+  'awaiting-pharmacist',
+];
+
+/** What stands over the figure of an order that no pump may be set to; undefined where one may, or it was given. */
+export const notInForce = (state: VersionState): string | undefined => {
+  if (ASKED_FOR.includes(state)) return 'Asked for, not in force';
+  return isEnded(state) && state !== 'countersigned' ? 'Ended, not in force' : undefined;
+};
+
 export const STATE_WORDS: Readonly<Record<VersionState, string>> = {
   draft: 'Draft',
   'awaiting-check': 'Awaiting check',

@@ -98,6 +98,7 @@ export const router = createBrowserRouter([
     : []),
   {
     path: '/',
+    hydrateFallbackElement: <></>,
     errorElement: <FaultPage />,
     lazy: async () => ({ Component: (await import('./app-shell')).AppShell }),
     children: inside.map((route) => ({ errorElement: <FaultPage />, ...route })),

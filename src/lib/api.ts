@@ -21,6 +21,16 @@ export type Answer<N extends RouteName> = z.output<Route<N>['response']>;
 const fill = (path: string, params: Record<string, string> | undefined): string =>
   path.replace(/:([a-z]+)/gi, (_match, name: string) => encodeURIComponent(params?.[name] ?? ''));
 
+/** The answer does not have the shape this page was built for: nothing of it is shown. */
+export class OtherVersionError extends Error {
+  override readonly name = 'OtherVersionError';
+  constructor() {
+    super(
+      'Brimline was updated while this page was open. Nothing is shown from a guess: load the page again.',
+    );
+  }
+}
+
 /**
  * Asks one route of the registry and parses its answer.
  * @throws ProblemError when the server refuses, UnreachableError when it does not answer.
@@ -41,5 +51,7 @@ export async function call<N extends RouteName>(name: N, args: Args<N>): Promise
     ...(background ? { background } : {}),
     ...(signal ? { signal } : {}),
   });
-  return route.response.parse(value) as Answer<N>;
+  const answer = route.response.safeParse(value);
+  if (!answer.success) throw new OtherVersionError();
+  return answer.data as Answer<N>;
 }

@@ -80,10 +80,17 @@ describe('the printed order', () => {
     'is marked across the page when it is %s',
     async (watermark) => {
       const { text } = await print({ watermark });
-      const flat = text.replace(/\s+/g, '');
-      // the words run diagonally: a reader may hand them out letter by letter, so count the letters it adds
-      const plain = (await print()).text.replace(/\s+/g, '');
-      expect(flat.length - plain.length).toBeGreaterThanOrEqual(watermark.replace(/\s+/g, '').length);
+      expect(text).toContain(`Not in force: ${watermark.toLowerCase()}`);
+      // nothing to tick, and no pump to set, on a paper nobody may follow
+      expect(text).not.toContain('At the bedside');
+      expect(text).not.toContain('Set the pump to');
+      // the words run diagonally and come out letter by letter: the letters it adds are counted
+      const flat = (words: string) => words.replace(/\s+/g, '');
+      const bedside =
+        'At the bedside before each bag Bag Child, two identifiers Bag, batch and expiry Pump rate and volume Line traced, site looked at Time Two initials 1 2 3';
+      const lead = flat(`Not in force: ${watermark}`).length - flat('Set the pump to').length;
+      const plain = flat((await print()).text).length - flat(bedside).length + lead;
+      expect(flat(text).length - plain).toBe(flat(watermark).length);
     },
   );
 

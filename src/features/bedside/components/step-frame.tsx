@@ -48,7 +48,8 @@ export function StepFrame(props: StepFrameProps) {
   useEffect(() => {
     // on a phone the refused step must be in view
     if (standing === 'refused') row.current?.scrollIntoView?.({ block: 'center' });
-  }, [standing]);
+    if (standing === 'now' && number > 1) row.current?.scrollIntoView?.({ block: 'nearest' });
+  }, [standing, number]);
   const classes = ['stp', CLASSES[standing], isPump ? 'pumpstep' : ''].filter(Boolean).join(' ');
   return (
     <li

@@ -9,7 +9,7 @@ export function StopBar({ page, stopping }: { page: BedsidePage; stopping: Stopp
   const { send, isSending, touchedAt, failure } = stopping;
   const at = touchedAt === null ? '' : formatTime(touchedAt, page.zone);
   return (
-    <footer className="gobar">
+    <footer className="gobar stop-first">
       <div>
         {failure ? (
           <Refusal title="Stop the pump by hand; not recorded.">

@@ -105,6 +105,9 @@ export function MaySee({ page, sentence }: { page: CheckPage; sentence?: string 
                 </span>
               ))}
         </Item>
+        <Item term="Other intake" full>
+          Read feeds and drug volumes from the feed and drug charts
+        </Item>
         <Item term="Blood tests" full>
           {results.length === 0
             ? 'None on the chart'

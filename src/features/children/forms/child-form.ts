@@ -33,15 +33,13 @@ export const toFields = (typed: TypedChild): unknown => ({
 });
 
 /** Reads the form as typed into the fields of the API; messages land on the field they belong to. */
-export const childFormSchema = typedChild
-  .transform(toFields)
-  .pipe(
-    childFields.extend({
-      sex: z.enum(SEXES, 'Choose, or say that it is not recorded.').nullable(),
-      bed: z.string(),
-      wardId: z.string(),
-    }),
-  );
+export const childFormSchema = typedChild.transform(toFields).pipe(
+  childFields.extend({
+    sex: z.enum(SEXES, 'Choose, or say that it is not recorded.').nullable(),
+    bed: z.string(),
+    wardId: z.string(),
+  }),
+);
 export type ReadChild = ChildFields & { bed: string; wardId: string };
 
 export const emptyChild = (wardId: string): TypedChild => ({

@@ -18,12 +18,19 @@ function NarrowGauge({ gauge }: Pick<ShownOrder, 'gauge'>) {
   );
 }
 
+type FigureBlockProps = {
+  shown: ShownOrder;
+  isStale?: boolean;
+  /** Instead of "Set the pump to", where nothing may be set: "Asked for, not in force". */
+  lead?: string;
+};
+
 /** The one large figure of an order: what goes on the pump, with its volume and fluid. */
-export function FigureBlock({ shown, isStale = false }: { shown: ShownOrder; isStale?: boolean }) {
+export function FigureBlock({ shown, isStale = false, lead }: FigureBlockProps) {
   const { figure, volume, over, fluid, gauge } = shown;
   return (
     <div className="figblock">
-      <p className="figlab">{figure.lead}</p>
+      <p className={lead ? 'figlab c-ochre' : 'figlab'}>{lead ?? figure.lead}</p>
       <Figure value={figure.value} unit={figure.unit} stale={isStale} />
       <div className="figsub">
         <p>

@@ -1,7 +1,7 @@
 import { Notice } from '@/components/ui/notice';
 import { StateWord } from '@/components/ui/state-word';
 import { useOfflineSince } from '@/lib/use-online';
-import { isDisputed, isOnPump } from '@shared/orders/states';
+import { isDisputed, isOnPump, notInForce } from '@shared/orders/states';
 import type { OrderView } from '@shared/routes/orders';
 import { formatTime, instant } from '@shared/time';
 import { shownFromContent } from '../forms/shown-order';
@@ -108,7 +108,7 @@ export function OrderOpen({ view, open, zone, readAt }: OrderOpenProps) {
       <section className="rp" aria-label="What the order works out to">
         <GaugeColumn shown={shown} />
         <div className="rcol">
-          <FigureBlock shown={shown} isStale={isStale} />
+          <FigureBlock shown={shown} isStale={isStale} lead={notInForce(view.state)} />
           <WorkingsSection steps={shown.steps} />
           <GivesSection gives={shown.gives} />
           <LimitsApplied limits={content.limits} />

@@ -1,3 +1,4 @@
+import { ghostWords } from '@shared/gauge/ghost-words';
 import type { GaugeInput } from '@shared/gauge/input';
 import type { WorkedOutDraft } from '@shared/orders/work-out-draft';
 import type { OrderContent } from '@shared/orders/content';
@@ -115,7 +116,7 @@ const ratioOf = (value: number, limit: number): number => (limit > 0 ? value / l
 /** A bolus has no weight bands: its one bracket shows what the brim leaves room for. Ghosts carry their amount. */
 function withBrimBand(gauge: ShownOrder['gauge']): ShownOrder['gauge'] {
   const ghosts = gauge.ghosts.map(({ label, ml: amount }) => ({
-    label: label.startsWith('as ') ? `${ml(amount)} ${label}` : `${label} ${formatNumber(amount, 1)}`,
+    label: ghostWords(label, amount),
     ml: amount,
   }));
   const toTheBrim = { label: 'to the brim', ml: gauge.brimMl, fullMl: gauge.brimMl };
