@@ -1,10 +1,11 @@
+import { connect, createServer, type AddressInfo } from 'node:net';
 import { setTimeout as sleep } from 'node:timers/promises';
 import { afterAll, describe, expect, it } from 'vitest';
 import { openDatabase } from '../../../server/db/client';
 import { DatabaseUnavailable } from '../../../server/db/faults';
 import { done, inHospital, readInHospital } from '../../../server/db/in-hospital';
 import { wards } from '../../../server/db/schema/hospitals';
-import { inTransaction } from '../../../server/db/transaction';
+import { inTransaction, INSTALLATION } from '../../../server/db/transaction';
 import { sharedDatabase } from '../support/database';
 import { faultOf, makeHospital, openAll } from './make-hospital';
 
@@ -54,6 +55,46 @@ describe('a transaction whose connection was cut while it waited', () => {
       );
     expect(await names(b.id)).toEqual(['Curlew', 'Heron', 'Plover']);
     expect(await names(a.id)).toEqual(['Heron']);
+  });
+});
+
+/** Stands between a pool and the database, goes away as soon as a connection asks for the array types, and stays away. */
+async function cutterBefore(url: string): Promise<{ url: string; cuts: () => number }> {
+  const { hostname, port } = new URL(url);
+  let count = 0;
+  const server = createServer((client) => {
+    const upstream = connect(Number(port), hostname);
+    const end = () => [client, upstream].forEach((socket) => socket.destroy());
+    [client, upstream].forEach((socket) => socket.on('error', end).on('close', end));
+    upstream.pipe(client);
+    client.on('data', (data) => {
+      if (!data.includes('typarray')) return void upstream.write(data);
+      count += 1;
+      server.close();
+      end();
+    });
+  });
+  await new Promise<void>((ready) => server.listen(0, '127.0.0.1', ready));
+  const through = new URL(url);
+  through.port = String((server.address() as AddressInfo).port);
+  return { url: through.href, cuts: () => count };
+}
+
+describe('a connection that is cut while it is being made', () => {
+  it('rejects the statement it was made for, and nothing outside of it', async () => {
+    const cutter = await cutterBefore(test.appUrl);
+    const stray: unknown[] = [];
+    const note = (reason: unknown) => void stray.push(reason);
+    process.on('unhandledRejection', note);
+    const pool = openDatabase(cutter.url, { max: 1 });
+    await expect(
+      readInHospital(pool, { hospitalId: INSTALLATION }, (tx) => tx.execute('select 1')),
+    ).rejects.toThrow(DatabaseUnavailable);
+    await sleep(50);
+    process.off('unhandledRejection', note);
+    await pool.close();
+    expect(cutter.cuts()).toBeGreaterThan(0);
+    expect(stray).toEqual([]);
   });
 });
 
