@@ -2,14 +2,24 @@ import { decimalText } from '@shared/canonical';
 import type { ChildHead, WeightRow } from '@shared/routes/children';
 import { toRfc3339, type Instant } from '@shared/time';
 import { staleText } from '@shared/weights/dosing';
-import { and, desc, eq, isNull } from 'drizzle-orm';
+import { and, desc, eq, isNull, sql } from 'drizzle-orm';
 import { alias } from 'drizzle-orm/pg-core';
 import { presentChild } from '../children/present';
 import { accounts } from '../db/schema/accounts';
 import { children, stays } from '../db/schema/children';
 import { wards } from '../db/schema/hospitals';
 import { weights } from '../db/schema/weights';
+import { statement } from '../db/statement';
 import type { Tx } from '../db/transaction';
+
+const childWithPlace = statement((tx) =>
+  tx
+    .select({ child: children, bed: stays.bed, wardId: wards.id, wardName: wards.name })
+    .from(children)
+    .leftJoin(stays, and(eq(stays.childId, children.id), isNull(stays.to)))
+    .leftJoin(wards, eq(wards.id, stays.wardId))
+    .where(eq(children.id, sql.placeholder('childId'))),
+);
 
 /** The head of a child's page; null where there is no such child. */
 export async function loadChildHead(
@@ -18,12 +28,7 @@ export async function loadChildHead(
   now: Instant,
   zone: string,
 ): Promise<ChildHead | null> {
-  const [row] = await tx
-    .select({ child: children, bed: stays.bed, wardId: wards.id, wardName: wards.name })
-    .from(children)
-    .leftJoin(stays, and(eq(stays.childId, children.id), isNull(stays.to)))
-    .leftJoin(wards, eq(wards.id, stays.wardId))
-    .where(eq(children.id, childId));
+  const [row] = await childWithPlace(tx, { childId });
   if (row === undefined) return null;
   return presentChild(row.child, row, now, zone);
 }

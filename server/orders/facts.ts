@@ -4,12 +4,13 @@ import type { CoverageFacts } from '@shared/orders/coverage';
 import type { VersionFacts } from '@shared/orders/decide';
 import type { Relation } from '@shared/orders/transitions';
 import type { Instant } from '@shared/time';
-import { and, eq, isNull } from 'drizzle-orm';
+import { and, eq, isNull, sql } from 'drizzle-orm';
 import { checks, exceptions, seenFigures } from '../db/schema/checks';
 import { stays } from '../db/schema/children';
 import { wards } from '../db/schema/hospitals';
 import { orders, orderVersions } from '../db/schema/orders';
 import { signatures } from '../db/schema/signatures';
+import { statement } from '../db/statement';
 import type { Tx } from '../db/transaction';
 import { findCheckers } from './find-checkers';
 
@@ -40,9 +41,26 @@ const UNCOVERED = {
   rev: orderVersions.rev,
 } as const;
 
-const selectVersion = (tx: Tx, versionId: string) =>
-  tx.select(UNCOVERED).from(orderVersions).where(eq(orderVersions.id, versionId));
-export type VersionRow = Awaited<ReturnType<typeof selectVersion>>[number];
+const selectVersion = (tx: Tx) =>
+  tx
+    .select(UNCOVERED)
+    .from(orderVersions)
+    .where(eq(orderVersions.id, sql.placeholder('id')));
+const versionById = statement(selectVersion);
+const heldVersionById = statement((tx) => selectVersion(tx).for('update'));
+const codeOfOrder = statement((tx) =>
+  tx
+    .select({ code: orders.code })
+    .from(orders)
+    .where(eq(orders.id, sql.placeholder('id'))),
+);
+const checksOfVersion = statement((tx) =>
+  tx
+    .select()
+    .from(checks)
+    .where(eq(checks.versionId, sql.placeholder('versionId'))),
+);
+export type VersionRow = Awaited<ReturnType<typeof versionById>>[number];
 export type CheckRow = typeof checks.$inferSelect;
 
 export type LoadedVersion = {
@@ -64,12 +82,11 @@ export async function loadFacts(
   now: Instant,
   { lock = false }: { lock?: boolean } = {},
 ): Promise<LoadedVersion | null> {
-  const query = selectVersion(tx, versionId);
-  const [row] = await (lock ? query.for('update') : query);
+  const [row] = await (lock ? heldVersionById : versionById)(tx, { id: versionId });
   if (row === undefined) return null;
-  const [order] = await tx.select({ code: orders.code }).from(orders).where(eq(orders.id, row.orderId));
+  const [order] = await codeOfOrder(tx, { id: row.orderId });
   const ward = await findWard(tx, row.childId);
-  const checkRows = await tx.select().from(checks).where(eq(checks.versionId, versionId));
+  const checkRows = await checksOfVersion(tx, { versionId });
   const standing = await loadStanding(tx, actor.id, row, checkRows);
   const facts: VersionFacts = {
     state: row.state,
@@ -91,13 +108,17 @@ export async function loadFacts(
   return { facts, coverage: standing.coverage, row, code: order?.code ?? '', ward, checks: checkRows };
 }
 
-/** The ward of a child's open stay. */
-export async function findWard(tx: Tx, childId: string): Promise<{ id: string; name: string } | null> {
-  const [ward] = await tx
+const wardOfChild = statement((tx) =>
+  tx
     .select({ id: wards.id, name: wards.name })
     .from(stays)
     .innerJoin(wards, eq(wards.id, stays.wardId))
-    .where(and(eq(stays.childId, childId), isNull(stays.to)));
+    .where(and(eq(stays.childId, sql.placeholder('childId')), isNull(stays.to))),
+);
+
+/** The ward of a child's open stay. */
+export async function findWard(tx: Tx, childId: string): Promise<{ id: string; name: string } | null> {
+  const [ward] = await wardOfChild(tx, { childId });
   return ward ?? null;
 }
 
@@ -131,16 +152,33 @@ function yourCheck(check: CheckRow | undefined): VersionFacts['yourCheck'] {
 const waitingLapse = (row: VersionRow): Instant | null =>
   isDraft(row.state) || isConnected(row.state) || row.givenAt !== null ? null : row.startBy;
 
-async function loadStanding(tx: Tx, accountId: string, row: VersionRow, checkRows: readonly CheckRow[]) {
-  const [granted] = await tx
+const grantedBy = statement((tx) =>
+  tx
     .select({ id: exceptions.id })
     .from(exceptions)
-    .where(and(eq(exceptions.versionId, row.id), eq(exceptions.by, accountId)))
-    .limit(1);
-  const signed = await tx
+    .where(
+      and(
+        eq(exceptions.versionId, sql.placeholder('versionId')),
+        eq(exceptions.by, sql.placeholder('accountId')),
+      ),
+    )
+    .limit(1),
+);
+const signedBy = statement((tx) =>
+  tx
     .select({ meaning: signatures.meaning })
     .from(signatures)
-    .where(and(eq(signatures.versionId, row.id), eq(signatures.by, accountId)));
+    .where(
+      and(
+        eq(signatures.versionId, sql.placeholder('versionId')),
+        eq(signatures.by, sql.placeholder('accountId')),
+      ),
+    ),
+);
+
+async function loadStanding(tx: Tx, accountId: string, row: VersionRow, checkRows: readonly CheckRow[]) {
+  const [granted] = await grantedBy(tx, { versionId: row.id, accountId });
+  const signed = await signedBy(tx, { versionId: row.id, accountId });
   const signedAs = (meaning: string) => signed.some((signature) => signature.meaning === meaning);
   const isAuthor = row.authorId === accountId;
   const hasLockedIn = checkRows.some((check) => check.checkerId === accountId && isLockedIn(check));
@@ -161,17 +199,34 @@ async function loadStanding(tx: Tx, accountId: string, row: VersionRow, checkRow
   return { you, coverage, sawFiguresAt: await lastSeen(tx, accountId, row) };
 }
 
-/** When this person last saw the figures of any version of the order, or signed another version of it themselves. */
-async function lastSeen(tx: Tx, accountId: string, row: VersionRow): Promise<Instant | null> {
-  const seen = await tx
+const seenBy = statement((tx) =>
+  tx
     .select({ at: seenFigures.at })
     .from(seenFigures)
     .innerJoin(orderVersions, eq(orderVersions.id, seenFigures.versionId))
-    .where(and(eq(orderVersions.orderId, row.orderId), eq(seenFigures.accountId, accountId)));
-  const authored = await tx
+    .where(
+      and(
+        eq(orderVersions.orderId, sql.placeholder('orderId')),
+        eq(seenFigures.accountId, sql.placeholder('accountId')),
+      ),
+    ),
+);
+const writtenBy = statement((tx) =>
+  tx
     .select({ id: orderVersions.id, at: orderVersions.stateSince })
     .from(orderVersions)
-    .where(and(eq(orderVersions.orderId, row.orderId), eq(orderVersions.authorId, accountId)));
+    .where(
+      and(
+        eq(orderVersions.orderId, sql.placeholder('orderId')),
+        eq(orderVersions.authorId, sql.placeholder('accountId')),
+      ),
+    ),
+);
+
+/** When this person last saw the figures of any version of the order, or signed another version of it themselves. */
+async function lastSeen(tx: Tx, accountId: string, row: VersionRow): Promise<Instant | null> {
+  const seen = await seenBy(tx, { orderId: row.orderId, accountId });
+  const authored = await writtenBy(tx, { orderId: row.orderId, accountId });
   const moments = [...seen, ...authored.filter(({ id }) => id !== row.id)].map(({ at }) => at);
   return moments.length === 0 ? null : (Math.max(...moments) as Instant);
 }

@@ -1,8 +1,9 @@
 import { CLINICAL_ROLES, type Entitlement, type Role } from '@shared/accounts/actor';
-import { and, eq, isNotNull, isNull } from 'drizzle-orm';
+import { and, eq, isNotNull, isNull, sql } from 'drizzle-orm';
 import { accounts, memberships } from '../db/schema/accounts';
 import { exceptions, seenFigures } from '../db/schema/checks';
 import { orderVersions } from '../db/schema/orders';
+import { statement } from '../db/statement';
 import type { Tx } from '../db/transaction';
 
 export type Colleague = {
@@ -13,9 +14,8 @@ export type Colleague = {
   entitlements: readonly Entitlement[];
 };
 
-/** Everyone of a ward who may act clinically: in service and with a registration number. */
-export function findColleagues(tx: Tx, wardId: string): Promise<Colleague[]> {
-  return tx
+const colleaguesOfWard = statement((tx) =>
+  tx
     .select({
       id: accounts.id,
       name: accounts.name,
@@ -27,12 +27,16 @@ export function findColleagues(tx: Tx, wardId: string): Promise<Colleague[]> {
     .innerJoin(accounts, eq(accounts.id, memberships.accountId))
     .where(
       and(
-        eq(memberships.wardId, wardId),
+        eq(memberships.wardId, sql.placeholder('wardId')),
         isNull(accounts.deactivatedAt),
         isNotNull(accounts.registrationNumber),
       ),
-    );
-}
+    ),
+);
+
+/** Everyone of a ward who may act clinically: in service and with a registration number. */
+export const findColleagues = (tx: Tx, wardId: string): Promise<Colleague[]> =>
+  colleaguesOfWard(tx, { wardId });
 
 const isClinical = ({ roles }: Colleague): boolean => roles.some((role) => CLINICAL_ROLES.includes(role));
 
@@ -58,19 +62,29 @@ export async function findCheckers(tx: Tx, matter: Matter): Promise<Colleague[]>
   );
 }
 
-async function barredFrom(tx: Tx, { orderId, versionId, authorId }: Matter): Promise<Set<string>> {
-  const saw = await tx
+const sawOrder = statement((tx) =>
+  tx
     .selectDistinct({ id: seenFigures.accountId })
     .from(seenFigures)
     .innerJoin(orderVersions, eq(orderVersions.id, seenFigures.versionId))
-    .where(eq(orderVersions.orderId, orderId));
-  const authors = await tx
+    .where(eq(orderVersions.orderId, sql.placeholder('orderId'))),
+);
+const wroteOrder = statement((tx) =>
+  tx
     .selectDistinct({ id: orderVersions.authorId })
     .from(orderVersions)
-    .where(eq(orderVersions.orderId, orderId));
-  const granters = await tx
+    .where(eq(orderVersions.orderId, sql.placeholder('orderId'))),
+);
+const decidedOn = statement((tx) =>
+  tx
     .selectDistinct({ id: exceptions.by })
     .from(exceptions)
-    .where(and(eq(exceptions.versionId, versionId), isNotNull(exceptions.by)));
+    .where(and(eq(exceptions.versionId, sql.placeholder('versionId')), isNotNull(exceptions.by))),
+);
+
+async function barredFrom(tx: Tx, { orderId, versionId, authorId }: Matter): Promise<Set<string>> {
+  const saw = await sawOrder(tx, { orderId });
+  const authors = await wroteOrder(tx, { orderId });
+  const granters = await decidedOn(tx, { versionId });
   return new Set([authorId, ...[...saw, ...authors, ...granters].flatMap(({ id }) => id ?? [])]);
 }

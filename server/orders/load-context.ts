@@ -4,9 +4,10 @@ import type { DraftContext } from '@shared/routes/orders';
 import { parseInstant, toRfc3339, type Instant } from '@shared/time';
 import { lastMeasuredAt } from '@shared/weights/dosing';
 import { kilograms } from '@shared/units';
-import { and, asc, desc, eq, isNull } from 'drizzle-orm';
+import { and, asc, desc, eq, isNull, sql } from 'drizzle-orm';
 import { fluidPlans, results } from '../db/schema/children';
 import { hospitals } from '../db/schema/hospitals';
+import { statement } from '../db/statement';
 import type { Tx } from '../db/transaction';
 import { rulebookInForce } from '../rulebook/in-force';
 import { stockedProducts } from '../shelf/queries';
@@ -53,9 +54,16 @@ export async function loadContext(tx: Tx, of: ContextOf, now: Instant): Promise<
   return { context, hiddenBoluses: hidden };
 }
 
+const zoneOfHospital = statement((tx) =>
+  tx
+    .select({ zone: hospitals.zone })
+    .from(hospitals)
+    .where(eq(hospitals.id, sql.placeholder('id'))),
+);
+
 /** The hospital's time zone. */
 export async function loadZone(tx: Tx, hospitalId: string): Promise<string> {
-  const [row] = await tx.select({ zone: hospitals.zone }).from(hospitals).where(eq(hospitals.id, hospitalId));
+  const [row] = await zoneOfHospital(tx, { id: hospitalId });
   if (row === undefined) throw new Error('no such hospital');
   return row.zone;
 }

@@ -6,17 +6,25 @@ import { decimalText } from '@shared/canonical';
 import type { OrderView, Signature } from '@shared/routes/orders';
 import type { ChildHead } from '@shared/routes/children';
 import { toRfc3339, type Instant } from '@shared/time';
-import { asc, desc, eq, inArray } from 'drizzle-orm';
+import { asc, desc, eq, sql } from 'drizzle-orm';
 import { accounts } from '../db/schema/accounts';
 import { infusions } from '../db/schema/bedside';
 import { products } from '../db/schema/shelf';
 import { orderVersions } from '../db/schema/orders';
 import { signatures } from '../db/schema/signatures';
+import { statement } from '../db/statement';
 import type { Tx } from '../db/transaction';
 import { loadExceptions } from '../exceptions/present';
 import type { CheckRow, LoadedVersion } from './facts';
 
 export type OpenOrder = NonNullable<OrderView['open']>;
+
+const contentOf = statement((tx) =>
+  tx
+    .select({ content: orderVersions.content })
+    .from(orderVersions)
+    .where(eq(orderVersions.id, sql.placeholder('versionId'))),
+);
 
 /** Everything of a version for someone who may see it; null while there is no content. */
 export async function presentOpen(
@@ -24,10 +32,7 @@ export async function presentOpen(
   { row, checks }: Pick<LoadedVersion, 'row' | 'checks'>,
   child: ChildHead,
 ): Promise<OpenOrder | null> {
-  const [stored] = await tx
-    .select({ content: orderVersions.content })
-    .from(orderVersions)
-    .where(eq(orderVersions.id, row.id));
+  const [stored] = await contentOf(tx, { versionId: row.id });
   if (stored?.content == null || row.contentSha256 === null) return null;
   const content = readContent(stored.content);
   const decisive = latestLocked(checks);
@@ -56,24 +61,32 @@ function latestLocked(checks: readonly CheckRow[]): CheckRow | undefined {
     .sort((a, b) => (b.lockedInAt ?? 0) - (a.lockedInAt ?? 0))[0];
 }
 
-async function namesOf(tx: Tx, ids: readonly string[]) {
-  const rows = await tx
+const peopleById = statement((tx) =>
+  tx
     .select({ id: accounts.id, name: accounts.name, title: accounts.title })
     .from(accounts)
-    .where(inArray(accounts.id, [...new Set(ids)]));
+    .where(sql`${accounts.id} = any(${sql.placeholder('ids')}::uuid[])`),
+);
+
+async function namesOf(tx: Tx, ids: readonly string[]) {
+  const rows = await peopleById(tx, { ids: `{${[...new Set(ids)].join(',')}}` });
   return new Map(rows.map((row) => [row.id, row]));
 }
+
+const signaturesOf = statement((tx) =>
+  tx
+    .select()
+    .from(signatures)
+    .where(eq(signatures.versionId, sql.placeholder('versionId')))
+    .orderBy(asc(signatures.at)),
+);
 
 /** A signature is void when the version was revised or its bytes are no longer those that were signed. */
 export async function loadSignatures(
   tx: Tx,
   row: Pick<LoadedVersion['row'], 'id' | 'state' | 'contentSha256'>,
 ): Promise<Signature[]> {
-  const rows = await tx
-    .select()
-    .from(signatures)
-    .where(eq(signatures.versionId, row.id))
-    .orderBy(asc(signatures.at));
+  const rows = await signaturesOf(tx, { versionId: row.id });
   return rows.map((signature) => ({
     meaning: signature.meaning,
     name: signature.printedName,
@@ -94,13 +107,17 @@ function correctedName({ child: signed }: OrderContent, child: ChildHead): strin
 
 const orNull = (at: Instant | null): string | null => (at === null ? null : toRfc3339(at));
 
-async function loadInfusions(tx: Tx, versionId: string): Promise<OpenOrder['infusions']> {
-  const rows = await tx
+const infusionsOf = statement((tx) =>
+  tx
     .select({ infusion: infusions, product: products.name })
     .from(infusions)
     .innerJoin(products, eq(products.id, infusions.bagProductId))
-    .where(eq(infusions.versionId, versionId))
-    .orderBy(desc(infusions.startedAt));
+    .where(eq(infusions.versionId, sql.placeholder('versionId')))
+    .orderBy(desc(infusions.startedAt)),
+);
+
+async function loadInfusions(tx: Tx, versionId: string): Promise<OpenOrder['infusions']> {
+  const rows = await infusionsOf(tx, { versionId });
   const people = rows.flatMap(({ infusion }) => [infusion.startedBy, infusion.endedBy ?? infusion.startedBy]);
   const names = people.length === 0 ? new Map<string, { name: string }>() : await namesOf(tx, people);
   return rows.map(({ infusion, product }) => ({

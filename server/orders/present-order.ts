@@ -6,9 +6,10 @@ import { ACTS, TRANSITIONS } from '@shared/orders/transitions';
 import { waitingWords } from '@shared/orders/words';
 import type { OrderView } from '@shared/routes/orders';
 import { toRfc3339, type Instant } from '@shared/time';
-import { asc, eq } from 'drizzle-orm';
+import { asc, eq, sql } from 'drizzle-orm';
 import { refused, type Refused } from '../db/outcome';
 import { orderVersions } from '../db/schema/orders';
+import { statement } from '../db/statement';
 import type { Tx } from '../db/transaction';
 import { findChild } from '../children/find-child';
 import { loadChildHead } from './chart-parts';
@@ -88,15 +89,19 @@ function actsOf(actor: Actor, { facts }: LoadedVersion, now: Instant): OrderView
   });
 }
 
-async function otherVersions(tx: Tx, { row }: LoadedVersion): Promise<OrderView['otherVersions']> {
-  const rows = await tx
+const versionsOfOrder = statement((tx) =>
+  tx
     .select({
       versionId: orderVersions.id,
       version: orderVersions.version,
       state: orderVersions.state,
     })
     .from(orderVersions)
-    .where(eq(orderVersions.orderId, row.orderId))
-    .orderBy(asc(orderVersions.version));
+    .where(eq(orderVersions.orderId, sql.placeholder('orderId')))
+    .orderBy(asc(orderVersions.version)),
+);
+
+async function otherVersions(tx: Tx, { row }: LoadedVersion): Promise<OrderView['otherVersions']> {
+  const rows = await versionsOfOrder(tx, { orderId: row.orderId });
   return rows.filter(({ versionId }) => versionId !== row.id);
 }

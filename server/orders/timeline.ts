@@ -1,6 +1,7 @@
 import type { OrderView } from '@shared/routes/orders';
-import { asc, eq } from 'drizzle-orm';
+import { asc, eq, sql } from 'drizzle-orm';
 import { ledger } from '../db/schema/ledger';
+import { statement } from '../db/statement';
 import type { Tx } from '../db/transaction';
 import type { LedgerAct } from '../ledger/entries';
 
@@ -47,13 +48,17 @@ const WORDS: Partial<Readonly<Record<LedgerAct, string>>> = {
 
 type TimelineRow = OrderView['timeline'][number];
 
-/** The ledger's rows about one version, oldest first; while it is covered nobody is named and no reason is told. */
-export async function loadTimeline(tx: Tx, versionId: string, isOpen: boolean): Promise<TimelineRow[]> {
-  const rows = await tx
+const entriesAbout = statement((tx) =>
+  tx
     .select({ seq: ledger.seq, entry: ledger.entry })
     .from(ledger)
-    .where(eq(ledger.subjectId, versionId))
-    .orderBy(asc(ledger.seq));
+    .where(eq(ledger.subjectId, sql.placeholder('versionId')))
+    .orderBy(asc(ledger.seq)),
+);
+
+/** The ledger's rows about one version, oldest first; while it is covered nobody is named and no reason is told. */
+export async function loadTimeline(tx: Tx, versionId: string, isOpen: boolean): Promise<TimelineRow[]> {
+  const rows = await entriesAbout(tx, { versionId });
   return rows.flatMap(({ seq, entry }) => {
     const read = JSON.parse(entry) as LedgerText;
     const words = WORDS[read.act];
