@@ -2,17 +2,16 @@ import { Link } from 'react-router-dom';
 import { useState } from 'react';
 import { BlankState } from '@/components/ui/blank-state';
 import { Button, buttonClass } from '@/components/ui/button';
-import { ErrorPanel } from '@/components/ui/error-panel';
 import { Reading } from '@/components/ui/reading';
 import { useKnownMe } from '@/features/accounts/api/use-me';
-import { problemWords } from '@/features/orders/api/problem-words';
 import { useAct } from '@/features/orders/api/use-act';
 import { useTitle } from '@/features/orders/api/use-title';
 import { ActPanel } from '@/features/orders/components/act-panel';
 import { dayTime } from '@/features/orders/forms/order-words';
-import { problemCode, queryClient } from '@/lib/query-client';
+import { queryClient } from '@/lib/query-client';
 import type { Answer } from '@/lib/api';
 import { useExceptionsForMe } from '../api/use-exceptions';
+import { NotRead } from '@/features/orders/components/not-read';
 
 type Waiting = Answer<'exceptionsForMe'>;
 type ToCountersign = Waiting['toCountersign'][number];
@@ -129,18 +128,7 @@ export function ExceptionsPage() {
           {data && <Telephone rows={data.toCountersign} zone={zone} onOpen={setOpenId} />}
           {!data && !error && <Reading what="what waits for you" />}
           {!data && error && (
-            <ErrorPanel
-              title="The list could not be read"
-              action={
-                <Button kind="primary" onClick={() => void refetch()}>
-                  Read it again
-                </Button>
-              }
-            >
-              {problemCode(error) === null
-                ? 'The server did not answer. Nothing was changed.'
-                : problemWords(error)}
-            </ErrorPanel>
+            <NotRead title="The list could not be read" error={error} onAgain={() => void refetch()} />
           )}
         </div>
       </main>

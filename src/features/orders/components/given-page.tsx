@@ -6,7 +6,6 @@ import { BottomBar } from '@/components/ui/bottom-bar';
 import { Button, buttonClass } from '@/components/ui/button';
 import { Choice } from '@/components/ui/choice';
 import { DateTimeField } from '@/components/ui/date-time-field';
-import { ErrorPanel } from '@/components/ui/error-panel';
 import { Group, Row } from '@/components/ui/group';
 import { NumberField } from '@/components/ui/number-field';
 import { Reading } from '@/components/ui/reading';
@@ -19,7 +18,6 @@ import { refreshChild, useChart } from '@/features/children/api/use-chart';
 import { ChildStrip } from '@/features/children/components/child-strip';
 import { call } from '@/lib/api';
 import { putProblem } from '@/lib/put-problem';
-import { problemCode } from '@/lib/query-client';
 import { UnreachableError } from '@/lib/server-answer';
 import type { Chart } from '@shared/routes/children';
 import { instant, localDateTime, parseInstant } from '@shared/time';
@@ -41,6 +39,7 @@ import { ROUTE_OPTIONS, weightWords } from '../forms/order-words';
 import { PasswordField } from './password-field';
 import { ReadBack } from './read-back';
 import { Refusal } from './refusal';
+import { NotRead } from './not-read';
 
 /** Prescribers of the ward; whoever writes it down may be the one who said so. */
 function useWhoSaidSo(wardId: string | undefined) {
@@ -283,18 +282,7 @@ export function GivenPage() {
   return (
     <main className="page" id="main" tabIndex={-1}>
       {error ? (
-        <ErrorPanel
-          title="The chart could not be read"
-          action={
-            <Button kind="primary" onClick={() => void refetch()}>
-              Read it again
-            </Button>
-          }
-        >
-          {problemCode(error) === null
-            ? 'The server did not answer. Nothing was changed.'
-            : problemWords(error)}
-        </ErrorPanel>
+        <NotRead title="The chart could not be read" error={error} onAgain={() => void refetch()} />
       ) : (
         <Reading what="the chart" />
       )}
