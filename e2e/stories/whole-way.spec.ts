@@ -42,8 +42,10 @@ test('a weight becomes a signed, printed, running order through a blind check', 
   expect(orderSeconds).toBeLessThan(60);
 
   const mail = await world.mail.waitFor('checker', 'waits for your check');
+  // the code, the due time and the link may hold any digits
+  const letter = `${mail.subject} ${mail.text}`.replaceAll(/BL-\d+-\d+|^Due: .*$|https?:\S+/gm, '');
   for (const told of ['Hartnoll', 'Edie', 'Sodium', '44', '1056', '16.4', 'Valehart'])
-    expect(mail.subject + mail.text).not.toContain(told);
+    expect(letter).not.toContain(told);
   const link = /https?:\S+/.exec(mail.text)?.[0] ?? '';
   expect(new URL(link).pathname).toBe(`/checks/${versionId}`);
 
