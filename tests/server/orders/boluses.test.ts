@@ -8,6 +8,10 @@ import { sharedDatabase } from '../support/database';
 import { makeWorld, PASSWORD, type World } from '../support/world';
 import { draft, read, seen, sign, start, STATED, type } from './write-order';
 
+/** An answer as text, less ids and hashes: they are random and may hold any digits. */
+const withoutIds = (body: unknown): string =>
+  JSON.stringify(body).replaceAll(/[0-9a-f]{8}-[0-9a-f-]{27}|[0-9a-f]{64}/g, '');
+
 let world: World;
 beforeAll(async () => {
   world = await makeWorld(sharedDatabase());
@@ -33,7 +37,7 @@ describe('two boluses of one child', () => {
     expect(refused.body.type).toContain('exception-needed');
     // 20 + 20 mL/kg reaches the line; the other order's figures are not told
     expect(refused.body.data.limits.map(({ code }: { code: string }) => code)).toEqual(['bolus-total']);
-    expect(JSON.stringify(refused.body)).not.toMatch(/328|40 mL/);
+    expect(withoutIds(refused.body)).not.toMatch(/328|40 mL/);
   });
 
   it('shows a bolus that waits for its check to nobody, not even in the totals', async () => {
@@ -44,7 +48,7 @@ describe('two boluses of one child', () => {
     const second = await start(other, childId, 'bolus');
     const page = await read(other, second.versionId);
     expect(page.context.bolusesLast24h).toEqual([]);
-    expect(JSON.stringify(page)).not.toContain('328');
+    expect(withoutIds(page)).not.toContain('328');
   });
 
   it('in an emergency go on, and the senior matter falls due within the hour', async () => {
